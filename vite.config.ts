@@ -1,0 +1,62 @@
+import tailwindcss from '@tailwindcss/vite';
+import react from '@vitejs/plugin-react';
+import { defineConfig } from 'vitest/config';
+
+/** The zones the pure tests run under: west and east of Greenwich, each with its own rule for summer time. */
+const TIME_ZONES = ['America/New_York', 'Australia/Lord_Howe'] as const;
+
+/** Where the development server passes API calls; `npm run dev` sets it. */
+const apiOrigin = process.env['POURBOOK_API_ORIGIN'] ?? 'http://127.0.0.1:5080';
+
+export default defineConfig({
+  plugins: [react(), tailwindcss()],
+  build: { outDir: 'dist/client', assetsInlineLimit: 0, sourcemap: true },
+  server: { host: '127.0.0.1', proxy: { '/api': apiOrigin, '/healthz': apiOrigin, '/readyz': apiOrigin } },
+  test: {
+    projects: [
+      ...TIME_ZONES.map((zone) => ({
+        extends: true as const,
+        test: {
+          name: `domain ${zone}`,
+          include: ['tests/domain/**/*.test.ts'],
+          environment: 'node',
+          env: { TZ: zone },
+          sequence: { shuffle: { files: true, tests: false } },
+        },
+      })),
+      {
+        extends: true as const,
+        test: {
+          name: 'client',
+          include: ['tests/client/**/*.test.{ts,tsx}'],
+          environment: 'jsdom',
+          setupFiles: ['tests/support/client-setup.ts'],
+        },
+      },
+      {
+        extends: true as const,
+        test: {
+          name: 'server',
+          include: ['tests/server/**/*.test.ts', 'tests/db/**/*.test.ts', 'tests/fixtures/**/*.test.ts'],
+          environment: 'node',
+          env: { TZ: 'America/New_York' },
+          globalSetup: ['tests/support/database-template.ts'],
+          testTimeout: 30_000,
+          hookTimeout: 60_000,
+        },
+      },
+      {
+        extends: true as const,
+        test: {
+          name: 'browser',
+          include: ['tests/browser/**/*.test.ts'],
+          environment: 'node',
+          globalSetup: ['tests/support/browser-server.ts'],
+          fileParallelism: false,
+          testTimeout: 60_000,
+          hookTimeout: 120_000,
+        },
+      },
+    ],
+  },
+});
