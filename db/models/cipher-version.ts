@@ -1,0 +1,41 @@
+import type { Modifiers, QueryBuilder, RelationMappings } from 'objection';
+import type { CipherDefinition } from '#domain/ciphers/definition.ts';
+import type { DateRange } from '#db/ranges.ts';
+import { Member } from './member.ts';
+import { RegisterModel } from './register-model.ts';
+
+/** What a cipher said, who entered it, and why. Never changed afterwards but for the moment a later version took its place. */
+export class CipherVersion extends RegisterModel {
+  static override readonly tableName = 'cipher_versions';
+  static override readonly idColumn = ['cipherId', 'number'];
+  static override readonly jsonAttributes = ['definition'];
+
+  declare cipherId: string;
+  /** 1, 2, 3 … without gaps. */
+  declare number: number;
+  declare definition: CipherDefinition;
+  /** The days in use, worked out by the database from the definition. */
+  declare readonly used: DateRange;
+  declare enteredById: string;
+  declare enteredAt: string;
+  declare reason: string;
+  /** `null`: in force. */
+  declare supersededAt: string | null;
+
+  declare enteredBy?: Member;
+
+  static override relationMappings = (): RelationMappings => ({
+    enteredBy: {
+      relation: RegisterModel.BelongsToOneRelation,
+      modelClass: Member,
+      join: { from: 'cipher_versions.enteredById', to: 'members.id' },
+    },
+  });
+
+  static override modifiers: Modifiers<QueryBuilder<CipherVersion>> = {
+    /** The one version that holds now. */
+    inForce: (query) => query.whereNull('cipher_versions.supersededAt'),
+    /** Every version, the newest first. */
+    newestFirst: (query) => query.orderBy('cipher_versions.number', 'desc'),
+  };
+}

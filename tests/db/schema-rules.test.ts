@@ -1,0 +1,106 @@
+import { describe, expect, test } from 'vitest';
+import {
+  DATE_MEANINGS,
+  DATE_PRECISIONS,
+  FACT_KINDS,
+  FITMENT_VERDICTS,
+  INTERCHANGES,
+  MACHINE_KINDS,
+  SOURCE_KINDS,
+} from '#db/vocabulary.ts';
+import { RANGE_STANDINGS } from '#domain/serials/build-window.ts';
+import { useDatabase } from '#tests/support/database.ts';
+
+const database = useDatabase();
+
+async function lines(query: string): Promise<readonly string[]> {
+  const { rows } = await database.knex.raw<{ rows: { line: string }[] }>(query);
+  return rows.map((row) => row.line);
+}
+
+const OUR_TABLES = `c.relnamespace = 'public'::regnamespace and c.relkind = 'r' and c.relname not like 'migrations%'`;
+
+describe('the schema as a whole', () => {
+  test('every foreign key has an index to look from', async () => {
+    const bare = await lines(`
+      select k.conname as line from pg_constraint k join pg_class c on c.oid = k.conrelid
+       where k.contype = 'f' and ${OUR_TABLES}
+         and not exists (select from pg_index i where i.indrelid = k.conrelid and i.indkey[0] = any (k.conkey))`);
+    expect(bare).toEqual([]);
+  });
+
+  test('every foreign key says what becomes of it when its target goes', async () => {
+    const silent = await lines(`
+      select k.conname as line from pg_constraint k join pg_class c on c.oid = k.conrelid
+       where k.contype = 'f' and k.confdeltype = 'a' and ${OUR_TABLES}`);
+    expect(silent).toEqual([]);
+  });
+
+  test('every table has a primary key, and no column is a local timestamp or an unbounded varchar', async () => {
+    expect(
+      await lines(`select c.relname as line from pg_class c where ${OUR_TABLES}
+         and not exists (select from pg_constraint k where k.conrelid = c.oid and k.contype = 'p')`),
+    ).toEqual([]);
+    expect(
+      await lines(`select a.attname as line from pg_attribute a join pg_class c on c.oid = a.attrelid
+         where ${OUR_TABLES} and a.attnum > 0 and a.atttypid in ('timestamp'::regtype, 'varchar'::regtype, 'json'::regtype)`),
+    ).toEqual([]);
+  });
+
+  /**
+   * A CHECK passes on NULL. Each of these means to: an absent value breaks no rule, or the check itself asks whether it is there.
+   * Told of the catalogue, whose tables hold facts or refer to them.
+   */
+  test('the checks of the catalogue over columns that may be null are known', async () => {
+    const checks = await lines(`
+      select k.conname as line from pg_constraint k join pg_class c on c.oid = k.conrelid
+       where k.contype = 'c' and (c.relname in ('sources', 'cipher_versions') or exists (
+               select from pg_constraint f where f.conrelid = c.oid and f.confrelid = 'facts'::regclass))
+         and exists (select from pg_attribute a where a.attrelid = k.conrelid and a.attnum = any (k.conkey) and not a.attnotnull)
+       order by k.conname`);
+    expect(checks).toEqual([
+      'cipher_versions_superseded_check',
+      'fact_sources_field_check',
+      'fact_versions_superseded_check',
+      'fitments_numbers_need_series_check',
+      'makers_foundry_mark_check',
+      'makers_years_check',
+      'positions_lead_check',
+      'sources_addressee_check',
+      'sources_author_check',
+      'sources_dated_check',
+      'sources_drawing_number_check',
+      'sources_member_check',
+      'sources_publisher_check',
+      'sources_sheet_check',
+      'sources_subject_check',
+      'sources_year_check',
+    ]);
+  });
+
+  test('a search by number is answered from its index', async () => {
+    await database.knex.raw('set local enable_seqscan = off');
+    const { rows } = await database.knex.raw<{ rows: Record<string, string>[] }>(
+      `explain select id from castings where number_key like 'B44%0_'`,
+    );
+    expect(rows.map((row) => row['QUERY PLAN']).join('\n')).toContain('castings_number_key');
+  });
+});
+
+describe('the words of the columns are those of the vocabulary', () => {
+  test.each<[string, string, readonly string[]]>([
+    ['facts_kind_check', 'facts', FACT_KINDS],
+    ['sources_kind_check', 'sources', SOURCE_KINDS],
+    ['fitments_verdict_check', 'fitments', FITMENT_VERDICTS],
+    ['supersessions_interchange_check', 'supersessions', INTERCHANGES],
+    ['serial_ranges_standing_check', 'serial_ranges', RANGE_STANDINGS],
+    ['machine_kind_check', 'machine_kind', MACHINE_KINDS],
+    ['date_meaning_check', 'date_meaning', DATE_MEANINGS],
+    ['date_precision_check', 'date_precision', DATE_PRECISIONS],
+  ])('%s', async (constraint, _, words) => {
+    const [definition = ''] = await lines(
+      `select pg_get_constraintdef(oid) as line from pg_constraint where conname = '${constraint}'`,
+    );
+    expect([...definition.matchAll(/'([^']*)'::text/g)].map(([, word]) => word)).toEqual([...words]);
+  });
+});
