@@ -24,6 +24,7 @@ export const REASON_CODES = [
   'too-many-glyphs',
   'field-cannot-end-at-break',
   'limits-needed',
+  'too-little-read',
 ] as const;
 export type ReasonCode = (typeof REASON_CODES)[number];
 

@@ -17,15 +17,18 @@ export type FieldKind = (typeof FIELD_KINDS)[number];
 export const WEEK_RULES = ['iso', 'simple', 'first-full-sunday'] as const;
 export type WeekRule = (typeof WEEK_RULES)[number];
 
-/** Limits of a definition. */
+/** Limits of a definition. Widths and lengths count glyphs. */
 export const CIPHER_LIMITS = {
   fields: 12,
+  symbolSets: 24,
   symbolsPerSet: 64,
+  valuesPerSymbol: 64,
   exceptions: 200,
   fieldWidth: 8,
   literalLength: 8,
   earliestYear: 1500,
   latestYear: 2199,
+  largestValue: 9999,
 } as const;
 
 export type FieldWidth = number | readonly [least: number, most: number];
