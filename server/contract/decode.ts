@@ -10,8 +10,8 @@ import { LIMITS } from './limits.ts';
 /** A reading in the mark notation; a fault names the character and its place. */
 export const MarkText = z
   .string()
-  .min(1, 'Type the mark as you see it')
-  .max(LIMITS.mark, 'A mark has at most 32 glyphs')
+  .min(1, { error: 'Type the mark as you see it', abort: true })
+  .max(LIMITS.mark, { error: 'A mark has at most 32 glyphs', abort: true })
   .superRefine((text, context) => {
     const reading = parseReading(text);
     if (!reading.ok) context.addIssue({ code: 'custom', message: reading.fault.message });
@@ -20,7 +20,7 @@ export const MarkText = z
 
 export const Limits = z
   .strictObject({ from: IsoDay.optional(), to: IsoDay.optional() })
-  .refine(({ from, to }) => from === undefined || to === undefined || from <= to, { path: ['to'], message: 'The last day is before the first' });
+  .refine(({ from, to }) => from === undefined || to === undefined || from <= to, { path: ['to'], error: 'The last day is before the first' });
 
 export const DecodeRequest = z
   .strictObject({
@@ -34,7 +34,7 @@ export const DecodeRequest = z
   })
   .refine(
     (request) => [request.cipher, request.cipherId, request.makerId].filter((one) => one !== undefined).length <= 1,
-    { path: ['cipher'], message: 'Give a cipher, a cipherId or a makerId, not several' },
+    { path: ['cipher'], error: 'Give a cipher, a cipherId or a makerId, not several' },
   );
 
 const Share = z.number().min(0).max(1);

@@ -9,15 +9,15 @@ const Days = z.int().min(0, 'A lead counts days from casting to assembly, so it 
 /** Accepted lead in days; `most` null = open. */
 export const Lead = z
   .strictObject({ least: Days, most: Days.nullable() })
-  .refine(({ least, most }) => most === null || least <= most, { path: ['most'], message: 'The most is less than the least' });
+  .refine(({ least, most }) => most === null || least <= most, { path: ['most'], error: 'The most is less than the least' });
 
 const OrderedSpan = z
   .strictObject({ from: IsoDay, to: IsoDay })
-  .refine(({ from, to }) => from <= to, { path: ['to'], message: 'The last day is before the first' });
+  .refine(({ from, to }) => from <= to, { path: ['to'], error: 'The last day is before the first' });
 
 const WeighedSpan = z
   .strictObject({ from: IsoDay, to: IsoDay, share: z.number().positive().max(1) })
-  .refine(({ from, to }) => from <= to, { path: ['to'], message: 'The last day is before the first' });
+  .refine(({ from, to }) => from <= to, { path: ['to'], error: 'The last day is before the first' });
 
 export const FitRequest = z.strictObject({
   candidates: z.array(WeighedSpan).min(1).max(LIMITS.candidates),
@@ -42,8 +42,12 @@ export const FitAnswer = z.object({
       ...Figures,
       verdict: z.enum(FIT_VERDICTS),
       leadDays: z.object({ least: z.number().int(), most: z.number().int() }),
+      /** Whether its share is large enough for a say in the verdict. */
+      counts: z.boolean(),
     }),
   ),
+  /** What the verdict would be if the date turned out to be one of these candidates (places in `candidates`); empty unless unsettled. */
+  wouldSettle: z.array(z.object({ verdict: z.enum(FIT_VERDICTS), share: z.number(), candidates: z.array(z.number().int()) })),
 });
 export type FitAnswer = z.infer<typeof FitAnswer>;
 

@@ -3,12 +3,15 @@ import { BySlug, History, Id, listAnswer, listQuery, Named, Provenance, Slug } f
 import { endpoint } from './endpoint.ts';
 
 export const PartTypeItem = z.object({ id: Id, slug: Slug, name: z.string(), castings: z.number().int() });
+export type PartTypeItem = z.infer<typeof PartTypeItem>;
+
 export const PartTypePage = PartTypeItem.extend({
   note: z.string().nullable(),
   caution: z.string().nullable(),
   models: z.array(Named),
   provenance: Provenance,
 });
+export type PartTypePage = z.infer<typeof PartTypePage>;
 
 export const listPartTypes = endpoint({
   method: 'GET',

@@ -3,6 +3,7 @@ import { BySlug, History, Id, listAnswer, listQuery, Slug, SourceKind } from './
 import { endpoint } from './endpoint.ts';
 
 export const SourceItem = z.object({ id: Id, slug: Slug, kind: SourceKind, title: z.string(), facts: z.number().int() });
+export type SourceItem = z.infer<typeof SourceItem>;
 
 export const FACT_KINDS = [
   'maker',
@@ -15,6 +16,7 @@ export const FACT_KINDS = [
   'supersession',
   'series',
   'serial-range',
+  'anchor',
   'cipher',
 ] as const;
 
