@@ -11,7 +11,12 @@ const apiOrigin = process.env['POURBOOK_API_ORIGIN'] ?? 'http://127.0.0.1:5080';
 export default defineConfig({
   plugins: [react(), tailwindcss()],
   build: { outDir: 'dist/client', assetsInlineLimit: 0, sourcemap: true },
-  server: { host: '127.0.0.1', proxy: { '/api': apiOrigin, '/healthz': apiOrigin, '/readyz': apiOrigin } },
+  server: {
+    host: '127.0.0.1',
+    proxy: { '/api': apiOrigin, '/healthz': apiOrigin, '/readyz': apiOrigin },
+    // PostgreSQL's own files change all the time.
+    watch: { ignored: ['**/.data/**', '**/.cache/**'] },
+  },
   test: {
     projects: [
       ...TIME_ZONES.map((zone) => ({
