@@ -1,0 +1,15 @@
+import type { Knex } from 'knex';
+import type { Day } from '#domain/dates/day.ts';
+import type { CipherCache } from '#server/services/cipher-cache.ts';
+
+/** What routes hand to services. */
+export type ApiDependencies = {
+  readonly knex: Knex;
+  /** Today's calendar day, UTC. */
+  readonly clock: () => Day;
+  readonly ciphers: CipherCache;
+  /** Whether the demo's accounts, whose passwords are printed, may be used. */
+  readonly demoSignIns: boolean;
+  /** The folder of the local post, where letters may be read by anybody. */
+  readonly localPostDirectory: string | undefined;
+};

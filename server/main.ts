@@ -1,0 +1,48 @@
+import { connect } from '#db/connection.ts';
+import type { Day } from '#domain/dates/day.ts';
+import { ConfigError, loadConfig } from './config.ts';
+import type { Config } from './config.ts';
+import { createApp } from './http/app.ts';
+import { createLogger } from './http/logging.ts';
+import { startServer } from './http/server.ts';
+import { mailHandlings } from './jobs/mail-handlings.ts';
+import { createMailer } from './mail/mailer.ts';
+import { startJobRunner } from './queue/job-runner.ts';
+
+const MILLISECONDS_A_DAY = 86_400_000;
+
+async function main(): Promise<void> {
+  const config = configOrExit();
+  const logger = createLogger(config.logLevel);
+  const knex = connect(config.databaseUrl);
+  const mailer = createMailer({ ...config.mail, origin: config.publicOrigin });
+  const jobs = startJobRunner({ url: config.databaseUrl, handlings: mailHandlings({ knex, mailer }), logger });
+  const app = createApp({ knex, config, logger, clock: todayInUtc, jobs });
+  const server = await startServer(app, config);
+  logger.info({ host: config.host, port: server.port, origin: config.publicOrigin }, 'listening');
+
+  const stop = async (signal: NodeJS.Signals): Promise<void> => {
+    logger.info({ signal }, 'stopping');
+    await Promise.all([server.stop(), jobs.stop()]);
+    await knex.destroy();
+    logger.info('stopped');
+  };
+  process.once('SIGTERM', (signal) => void stop(signal));
+  process.once('SIGINT', (signal) => void stop(signal));
+}
+
+function configOrExit(): Config {
+  try {
+    return loadConfig();
+  } catch (error) {
+    if (!(error instanceof ConfigError)) throw error;
+    process.stderr.write(`${error.message}\n`);
+    return process.exit(1);
+  }
+}
+
+function todayInUtc(): Day {
+  return Math.floor(Date.now() / MILLISECONDS_A_DAY);
+}
+
+await main();

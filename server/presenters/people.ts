@@ -1,0 +1,102 @@
+import { z } from 'zod';
+import type { SessionItem as SessionAnswer, SignInAnswer } from '#contract/accounts.ts';
+import type { Me } from '#contract/people.ts';
+import type { Session } from '#db/models/session.ts';
+import { mayDecide, maySeeAudit, maySeeMembers } from '#server/policies/staff.ts';
+import type { MineOnRecord } from '#server/services/people/export-mine.ts';
+import type { MeOnRecord } from '#server/services/people/read-me.ts';
+import type { SignedIn } from '#server/services/people/sign-in.ts';
+import { hasSecondFactor } from '#server/services/second-factors/read-second-factors.ts';
+import { presentNamed } from './common.ts';
+import { loaded } from './loaded.ts';
+
+type SessionItem = z.infer<typeof SessionAnswer>;
+type SignInState = z.infer<typeof SignInAnswer>;
+type Json = z.core.util.JSONType;
+
+export function presentMe({ member, makers, standing, secondFactors, unreadNotices }: MeOnRecord): Me {
+  return {
+    id: member.id,
+    displayName: member.displayName,
+    email: loaded(member.email),
+    role: member.role,
+    moderates: member.scope === 'all' ? null : makers.map(presentNamed),
+    secondFactors: { ...secondFactors },
+    secondFactorOwed: standing.secondFactorOwed,
+    unreadNotices,
+    can: { decideContributions: mayDecide(standing), seeMembers: maySeeMembers(standing), seeAudit: maySeeAudit(standing) },
+  };
+}
+
+export function presentSignIn(signedIn: SignedIn): SignInState {
+  if (signedIn.state === 'signed-in') return { state: 'signed-in', me: presentMe(signedIn.me) };
+  const { authenticator, passkeys, recoveryCodesLeft } = signedIn.secondFactors;
+  return {
+    state: 'second-factor',
+    ways: [
+      ...(authenticator ? (['authenticator'] as const) : []),
+      ...(passkeys > 0 ? (['passkey'] as const) : []),
+      ...(recoveryCodesLeft > 0 ? (['recovery-code'] as const) : []),
+    ],
+  };
+}
+
+export function presentSession({ publicId, startedAt, lastSeenAt, device, strength }: Session, currentId: string): SessionItem {
+  return { id: publicId, current: publicId === currentId, startedAt, lastSeenAt, device, secondFactor: strength === 'second-factor' };
+}
+
+/** A stored document as plain JSON. */
+function asJson(document: unknown): Json {
+  return z.json().parse(document);
+}
+
+/** Everything on record about a member, as data. Field by field: what is secret or about somebody else is not among them. */
+export function presentMine(mine: MineOnRecord): Record<string, Json> {
+  const { member, makers, sessions, secondFactors, passkeys, notices, noticeChoices, letters, entered, acts } = mine;
+  return {
+    account: {
+      id: member.id,
+      displayName: member.displayName,
+      email: member.email,
+      emailVerifiedAt: member.emailVerifiedAt,
+      joinedAt: member.joinedAt,
+      role: member.role,
+      moderates: member.scope === 'all' ? 'all' : makers.map(({ slug }) => slug),
+    },
+    secondFactors: {
+      inUse: hasSecondFactor(secondFactors),
+      authenticator: secondFactors.authenticator,
+      recoveryCodesLeft: secondFactors.recoveryCodesLeft,
+      passkeys: passkeys.map(({ name, addedAt, lastUsedAt }) => ({ name, addedAt, lastUsedAt })),
+    },
+    sessions: sessions.map(({ startedAt, lastSeenAt, device, strength }) => ({ startedAt, lastSeenAt, device, strength })),
+    notices: notices.map(({ kind, title, body, href, at, readAt }) => ({ kind, title, body, href, at, readAt })),
+    noticesByEmail: noticeChoices.map(({ kind, byEmail }) => ({ kind, byEmail })),
+    letters: letters.map(({ template, toAddress, state, queuedAt, settledAt }) => ({ letter: template, to: toAddress, state, queuedAt, settledAt })),
+    entered: {
+      facts: entered.facts.map(({ factId, kind, number, enteredAt, reason, payload }) => ({
+        fact: factId,
+        kind,
+        version: number,
+        enteredAt,
+        reason,
+        payload: asJson(payload),
+      })),
+      ciphers: entered.ciphers.map(({ cipherId, number, enteredAt, reason, definition }) => ({
+        cipher: cipherId,
+        version: number,
+        enteredAt,
+        reason,
+        definition: asJson(definition),
+      })),
+      sources: entered.sources.map(({ slug, kind, title, enteredAt, note }) => ({ slug, kind, title, enteredAt, note })),
+    },
+    acts: acts.map(({ at, act, actorId, subjectId, detail }) => ({
+      at,
+      act,
+      byMe: actorId === member.id,
+      aboutMe: subjectId === member.id,
+      detail: asJson(detail),
+    })),
+  };
+}
