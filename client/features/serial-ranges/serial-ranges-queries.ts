@@ -1,0 +1,26 @@
+import { keepPreviousData, queryOptions } from '@tanstack/react-query';
+import { listSerialRanges, readSerialRange, readSerialRangeHistory } from '#contract/serial-ranges.ts';
+import type { CallInput } from '#contract/endpoint.ts';
+import { call } from '../../lib/call.ts';
+
+export type SerialRangesSearch = CallInput<typeof listSerialRanges>['query'];
+
+export const serialRangeKeys = {
+  all: ['serial-ranges'] as const,
+  list: (search: SerialRangesSearch) => [...serialRangeKeys.all, 'list', search] as const,
+  page: (slug: string) => [...serialRangeKeys.all, 'page', slug] as const,
+  history: (slug: string) => [...serialRangeKeys.all, 'history', slug] as const,
+};
+
+export const serialRangesList = (search: SerialRangesSearch) =>
+  queryOptions({
+    queryKey: serialRangeKeys.list(search),
+    queryFn: ({ signal }) => call(listSerialRanges, { query: search, signal }),
+    placeholderData: keepPreviousData,
+  });
+
+export const serialRangePage = (slug: string) =>
+  queryOptions({ queryKey: serialRangeKeys.page(slug), queryFn: ({ signal }) => call(readSerialRange, { params: { slug }, signal }) });
+
+export const serialRangeHistory = (slug: string) =>
+  queryOptions({ queryKey: serialRangeKeys.history(slug), queryFn: ({ signal }) => call(readSerialRangeHistory, { params: { slug }, signal }) });
