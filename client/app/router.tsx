@@ -3,6 +3,7 @@ import { createBrowserRouter, Navigate } from 'react-router-dom';
 import type { RouteObject } from 'react-router-dom';
 import { lazyPage } from '../lib/lazy-page.ts';
 import { paths } from '../lib/paths.ts';
+import { peopleRoutes } from '../pages/account/people-routes.ts';
 import { catalogueRoutes } from '../pages/catalogue/catalogue-routes.ts';
 import { ErrorPage, FramedErrorPage, NotFoundPage } from './error-page.tsx';
 import { FirstLoad } from './first-load.tsx';
@@ -22,6 +23,7 @@ function routes(queryClient: QueryClient): RouteObject[] {
             { path: '/', element: <Navigate to={paths.decode()} replace /> },
             { path: '/decode', lazy: lazyPage(() => import('../pages/decode/decode-page.tsx'), queryClient) },
             ...catalogueRoutes(queryClient),
+            ...peopleRoutes(queryClient),
             { path: '/problems/:kind', lazy: lazyPage(() => import('./problem-page.tsx'), queryClient) },
             { path: '*', Component: NotFoundPage },
           ],

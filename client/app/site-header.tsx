@@ -1,6 +1,7 @@
 import { Link, NavLink } from 'react-router-dom';
 import { paths } from '../lib/paths.ts';
 import { Logo } from '../ui/logo.tsx';
+import { ViewerMenu } from './viewer-menu.tsx';
 
 const CATALOGUE_AREAS = ['/catalogue', '/makers', '/models', '/part-types', '/castings', '/ciphers', '/serial-ranges', '/sources'] as const;
 
@@ -25,6 +26,7 @@ export function SiteHeader({ pathname }: { readonly pathname: string }) {
           </li>
         </ul>
       </nav>
+      <ViewerMenu />
     </header>
   );
 }

@@ -24,4 +24,16 @@ export const paths = {
   source: (slug: string) => `/sources/${slug}`,
   sourceHistory: (slug: string) => `/sources/${slug}/history`,
   developers: () => '/developers',
+  signUp: () => '/sign-up',
+  /** `next` is where to go on afterwards, an address of this site. */
+  signIn: (next?: string) => (next === undefined ? '/sign-in' : `/sign-in?next=${encodeURIComponent(next)}`),
+  passwordForgotten: () => '/password/forgotten',
+  account: (part?: string) => (part === undefined ? '/account' : `/account#${part}`),
+  accountClosed: () => '/account/closed',
+  notices: (search = '') => `/notices${search}`,
+  registrarMembers: (search = '') => `/registrar/members${search}`,
+  registrarMember: (id: string) => `/registrar/members/${id}`,
+  registrarAudit: (search = '') => `/registrar/audit${search}`,
+  post: () => '/post',
+  letter: (id: string) => `/post/${id}`,
 } as const;

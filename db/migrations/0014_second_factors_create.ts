@@ -25,7 +25,7 @@ export async function up(knex: Knex): Promise<void> {
     create table passkeys (
       id uuid primary key,
       member_id uuid not null references members on delete cascade,
-      credential_id text not null unique check (credential_id ~ '^[A-Za-z0-9_-]{1,1400}$'),
+      credential_id text not null unique check (credential_id ~ '^[A-Za-z0-9_-]+$' and char_length(credential_id) <= 1400),
       public_key bytea not null,
       counter bigint not null check (counter >= 0),
       transports text[] not null,

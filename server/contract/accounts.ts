@@ -35,7 +35,7 @@ export const giveSecondFactor = endpoint({
   method: 'POST',
   path: '/sign-in/second-factor',
   summary: 'Finish signing in with a code from an authenticator or a recovery code',
-  body: z.strictObject({ way: z.enum(['authenticator', 'recovery-code']), code: z.string().trim().min(6).max(40) }),
+  body: z.strictObject({ way: z.enum(['authenticator', 'recovery-code']), code: z.string().trim().min(6, 'Type the whole code').max(40) }),
   answer: SignInAnswer,
 });
 export const signOut = endpoint({ method: 'POST', path: '/sign-out', summary: 'End this session', answer: Done });
@@ -90,7 +90,7 @@ export const confirmIdentity = endpoint({
   summary: 'Prove once more who you are, for ten minutes',
   body: z.discriminatedUnion('way', [
     z.strictObject({ way: z.literal('password'), password: GivenPassword }),
-    z.strictObject({ way: z.literal('authenticator'), code: z.string().trim().min(6).max(12) }),
+    z.strictObject({ way: z.literal('authenticator'), code: z.string().trim().min(6, 'Type the whole code').max(12) }),
   ]),
   answer: Done,
 });

@@ -8,7 +8,8 @@ export const MEMBER_STATES = ['active', 'unverified', 'suspended', 'closed'] as 
 export const MemberItem = z.object({
   id: Id,
   displayName: z.string(),
-  email: z.string(),
+  /** Null once the account is closed. */
+  email: z.string().nullable(),
   role: Role,
   moderates: z.array(Named).nullable(),
   state: z.enum(MEMBER_STATES),

@@ -8,6 +8,7 @@ import {
   endSession,
   exportMine,
   forgotPassword,
+  giveSecondFactor,
   listSessions,
   readMe,
   resetPassword,
@@ -16,6 +17,15 @@ import {
   signUp,
   verifyEmail,
 } from './accounts.ts';
+import {
+  changeRole,
+  endMemberSessions,
+  listAudit,
+  listMembers,
+  readMember,
+  suspendMember,
+  unsuspendMember,
+} from './admin.ts';
 import { listCastings, readCasting, readCastingHistory } from './castings.ts';
 import { listCiphers, readCipher, readCipherHistory } from './ciphers.ts';
 import { decodeMark } from './decode.ts';
@@ -25,6 +35,18 @@ import { listMakers, readMaker, readMakerHistory } from './makers.ts';
 import { listModels, readBuild, readModel, readModelHistory } from './models.ts';
 import { chooseNotices, listNotices, markNoticesRead, readNoticeChoices, unsubscribe } from './notices.ts';
 import { listPartTypes, readPartType, readPartTypeHistory } from './part-types.ts';
+import {
+  addPasskey,
+  confirmAuthenticator,
+  finishPasskeySignIn,
+  listPasskeys,
+  removeAuthenticator,
+  removePasskey,
+  renewRecoveryCodes,
+  startAuthenticator,
+  startPasskey,
+  startPasskeySignIn,
+} from './second-factors.ts';
 import { listSerialRanges, readSerialRange, readSerialRangeHistory } from './serial-ranges.ts';
 import { listSources, readSource, readSourceHistory } from './sources.ts';
 
@@ -75,4 +97,22 @@ export const ENDPOINTS = {
   readNoticeChoices,
   chooseNotices,
   unsubscribe,
+  giveSecondFactor,
+  startAuthenticator,
+  confirmAuthenticator,
+  removeAuthenticator,
+  renewRecoveryCodes,
+  listPasskeys,
+  startPasskey,
+  addPasskey,
+  removePasskey,
+  startPasskeySignIn,
+  finishPasskeySignIn,
+  listMembers,
+  readMember,
+  changeRole,
+  suspendMember,
+  unsuspendMember,
+  endMemberSessions,
+  listAudit,
 } as const satisfies Record<string, Endpoint>;

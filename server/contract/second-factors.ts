@@ -52,7 +52,7 @@ export const addPasskey = endpoint({
   path: '/me/passkeys',
   status: 201,
   summary: 'Finish adding a passkey',
-  body: z.strictObject({ name: z.string().trim().min(1).max(PEOPLE_LIMITS.passkeyName), response: WebAuthnJson }),
+  body: z.strictObject({ name: z.string().trim().min(1, 'Give it a name').max(PEOPLE_LIMITS.passkeyName), response: WebAuthnJson }),
   answer: z.object({ passkey: PasskeyItem, recoveryCodes: z.array(z.string()) }),
 });
 export const removePasskey = endpoint({

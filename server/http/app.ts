@@ -50,6 +50,7 @@ export function createApp({ knex, config, logger, clock, jobs }: AppDependencies
       knex,
       clock,
       ciphers,
+      publicOrigin: config.publicOrigin,
       demoSignIns: config.environment !== 'production',
       localPostDirectory: config.environment === 'production' ? undefined : config.localPostDirectory,
     }),

@@ -10,6 +10,8 @@ export type ApiDependencies = {
   readonly ciphers: CipherCache;
   /** Whether the demo's accounts, whose passwords are printed, may be used. */
   readonly demoSignIns: boolean;
+  /** Scheme, host and port that visitors use. */
+  readonly publicOrigin: string;
   /** The folder of the local post, where letters may be read by anybody. */
   readonly localPostDirectory: string | undefined;
 };

@@ -56,12 +56,14 @@ describe('without a mouse', () => {
     await page.keyboard.press('Enter');
     const casting = page.getByRole('link', { name: 'B4406' });
     await casting.waitFor();
-    for (let step = 0; step < 40 && !(await casting.evaluate((link) => link === document.activeElement)); step += 1) await page.keyboard.press('Tab');
+    for (let step = 0; step < 40 && !(await casting.evaluate((link) => link === document.activeElement)); step += 1)
+      await page.keyboard.press('Tab');
     await page.keyboard.press('Enter');
     await page.getByRole('heading', { level: 1, name: /first pattern/ }).waitFor();
     await expect.poll(() => page.evaluate(() => document.activeElement?.tagName)).toBe('H1');
     const decode = page.getByRole('link', { name: 'Decode a date on this casting' });
-    for (let step = 0; step < 40 && !(await decode.evaluate((link) => link === document.activeElement)); step += 1) await page.keyboard.press('Tab');
+    for (let step = 0; step < 40 && !(await decode.evaluate((link) => link === document.activeElement)); step += 1)
+      await page.keyboard.press('Tab');
     await page.keyboard.press('Enter');
     await page.waitForURL(/\/decode/);
     await end();
@@ -89,13 +91,21 @@ describe('with a thumb', () => {
 });
 
 describe('on paper', () => {
-  it.each(['/castings/brackwater-b4406', '/models/brackwater-30-crawler'])('%s leaves the controls out and keeps the sources', async (address) => {
-    const { page, end } = await visit(browser, inject('baseUrl'));
-    await page.goto(address, { waitUntil: 'networkidle' });
-    await page.emulateMedia({ media: 'print' });
-    expect(await page.getByRole('link', { name: 'What changed' }).isVisible()).toBe(false);
-    expect(await page.getByRole('navigation').isVisible()).toBe(false);
-    expect(await page.getByText(/^Entered by/).first().isVisible()).toBe(true);
-    await end();
-  });
+  it.each(['/castings/brackwater-b4406', '/models/brackwater-30-crawler'])(
+    '%s leaves the controls out and keeps the sources',
+    async (address) => {
+      const { page, end } = await visit(browser, inject('baseUrl'));
+      await page.goto(address, { waitUntil: 'networkidle' });
+      await page.emulateMedia({ media: 'print' });
+      expect(await page.getByRole('link', { name: 'What changed' }).isVisible()).toBe(false);
+      expect(await page.getByRole('navigation').isVisible()).toBe(false);
+      expect(
+        await page
+          .getByText(/^Entered by/)
+          .first()
+          .isVisible(),
+      ).toBe(true);
+      await end();
+    },
+  );
 });

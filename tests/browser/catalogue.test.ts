@@ -82,14 +82,23 @@ describe('a list', () => {
     await page.goto('/castings');
     await castings(page).getByRole('rowheader').first().waitFor();
     await page.getByLabel('Maker').selectOption({ label: 'Hesper Lathe Company' });
-    await page.getByText(/^38 castings match$/).first().waitFor();
+    await page
+      .getByText(/^38 castings match$/)
+      .first()
+      .waitFor();
     await page.getByLabel('Part type').selectOption({ label: 'Headstock' });
     await page.waitForURL(/partType=headstock/);
-    await page.getByText(/castings? match(es)?$/).first().waitFor();
+    await page
+      .getByText(/castings? match(es)?$/)
+      .first()
+      .waitFor();
     await page.goBack();
     expect(await page.getByLabel('Part type').inputValue()).toBe('');
     expect(await page.getByLabel('Maker').inputValue()).toBe('hesper-lathe-company');
-    await page.getByText(/^38 castings match$/).first().waitFor();
+    await page
+      .getByText(/^38 castings match$/)
+      .first()
+      .waitFor();
     await page.goBack();
     expect(await page.getByLabel('Maker').inputValue()).toBe('');
     expect(complaints).toEqual([]);
@@ -155,7 +164,11 @@ describe('a model', () => {
     await page.getByText('Read O as 0.').waitFor();
     await page.getByRole('link', { name: 'Hold a mark against it' }).click();
     await page.waitForURL(/\/decode/);
-    expect(Object.fromEntries(searchOf(page))).toEqual({ maker: 'brackwater-tractor-works', model: 'brackwater-30-crawler', serial: '3c 12O7' });
+    expect(Object.fromEntries(searchOf(page))).toEqual({
+      maker: 'brackwater-tractor-works',
+      model: 'brackwater-30-crawler',
+      serial: '3c 12O7',
+    });
     expect(complaints).toEqual([]);
   });
 
@@ -184,7 +197,9 @@ describe('a model', () => {
     await page.goto('/models/brackwater-30-crawler');
     const serials = page.getByRole('table', { name: 'Numbers of 3C' });
     await serials.getByRole('columnheader', { name: /our reading/ }).waitFor();
-    expect(await serials.getByRole('row', { name: /3C.1196–1228.*August 1938 – August 1941.*April 1941.*conjectural/ }).count()).toBe(1);
+    expect(
+      await serials.getByRole('row', { name: /3C.1196–1228.*August 1938 – August 1941.*April 1941.*conjectural/ }).count(),
+    ).toBe(1);
     expect(await serials.getByRole('row', { name: /a gap: nothing on record/ }).count()).toBe(1);
   });
 
@@ -242,7 +257,10 @@ describe('history and sources', () => {
     await heading(page, 'What changed');
     expect(await page.getByRole('heading', { level: 2 }).allTextContents()).toEqual(['Version 3', 'Version 2', 'Version 1']);
     expect(await page.getByText('In force').count()).toBe(1);
-    await page.getByRole('table', { name: 'What version 3 changed' }).getByRole('row', { name: 'Used to 31 Dec 1950 31 Dec 1954' }).waitFor();
+    await page
+      .getByRole('table', { name: 'What version 3 changed' })
+      .getByRole('row', { name: 'Used to 31 Dec 1950 31 Dec 1954' })
+      .waitFor();
     expect(complaints).toEqual([]);
   });
 
@@ -264,19 +282,26 @@ describe('history and sources', () => {
     const { page } = here;
     await page.goto('/sources/brackwater-drawing-4406-2');
     await heading(page, 'Works drawing 4406, sheet 2');
-    await page.getByRole('region', { name: /^Castings?$/ }).getByRole('link', { name: /B4406/ }).first().click();
+    await page
+      .getByRole('region', { name: /^Castings?$/ })
+      .getByRole('link', { name: /B4406/ })
+      .first()
+      .click();
     await heading(page, /first pattern/);
   });
 });
 
 describe('when it goes wrong', () => {
-  it.each(['/castings/no-such-casting', '/makers/Not%20A%20Slug', '/ciphers/no-such/history'])('%s is nothing, and says so', async (address) => {
-    const { page } = here;
-    await page.goto(address);
-    await heading(page, 'Nothing stands at this address');
-    await page.getByRole('link', { name: 'Open the catalogue' }).click();
-    await heading(page, 'The catalogue');
-  });
+  it.each(['/castings/no-such-casting', '/makers/Not%20A%20Slug', '/ciphers/no-such/history'])(
+    '%s is nothing, and says so',
+    async (address) => {
+      const { page } = here;
+      await page.goto(address);
+      await heading(page, 'Nothing stands at this address');
+      await page.getByRole('link', { name: 'Open the catalogue' }).click();
+      await heading(page, 'The catalogue');
+    },
+  );
 
   it('keeps a list’s page when the register is away, and asks again', async () => {
     const { page } = here;
@@ -322,10 +347,19 @@ describe('for developers', () => {
     await heading(page, 'For developers');
     const operation = page.locator('#readBuild');
     await operation.locator('summary').click();
-    await operation.getByRole('table', { name: 'Parameters' }).getByRole('row', { name: /serial/ }).waitFor();
+    await operation
+      .getByRole('table', { name: 'Parameters' })
+      .getByRole('row', { name: /serial/ })
+      .waitFor();
     await operation.getByRole('list', { name: 'readBuild, answer' }).getByText('standing').first().waitFor();
-    await page.getByRole('region', { name: 'Whether the one fits the other', exact: true }).getByRole('button', { name: 'Send it' }).click();
-    await page.getByRole('region', { name: 'Answer: Whether the one fits the other' }).getByText('"verdict": "unsettled"').waitFor();
+    await page
+      .getByRole('region', { name: 'Whether the one fits the other', exact: true })
+      .getByRole('button', { name: 'Send it' })
+      .click();
+    await page
+      .getByRole('region', { name: 'Answer: Whether the one fits the other' })
+      .getByText('"verdict": "unsettled"')
+      .waitFor();
     await page.getByRole('link', { name: 'not-found', exact: true }).click();
     await heading(page, 'Nothing here');
     expect(complaints).toEqual([]);

@@ -11,8 +11,13 @@ export type CastingRule = { readonly lanes: readonly Lane[]; readonly focus: rea
  * A casting on the rule: its years of production, the machines it was built into, and the ciphers its date may be in.
  * Zooms to the casting and its machines, so that a cipher's long life does not shrink them; null where nothing is dated.
  */
-export function castingRule(casting: Pick<CastingPage, 'made' | 'fitments'>, ciphers: readonly Pick<CipherPage, 'title' | 'used'>[]): CastingRule | null {
-  const built = casting.fitments.flatMap(({ verdict, built: span }) => (verdict === 'as-built' && span !== null && hasAnEnd(span) ? [span] : []));
+export function castingRule(
+  casting: Pick<CastingPage, 'made' | 'fitments'>,
+  ciphers: readonly Pick<CipherPage, 'title' | 'used'>[],
+): CastingRule | null {
+  const built = casting.fitments.flatMap(({ verdict, built: span }) =>
+    verdict === 'as-built' && span !== null && hasAnEnd(span) ? [span] : [],
+  );
   const made = casting.made !== null && hasAnEnd(casting.made) ? [casting.made] : [];
   const used = ciphers.filter((cipher) => hasAnEnd(cipher.used));
   const zoomed = [...made, ...built];
@@ -24,13 +29,21 @@ export function castingRule(casting: Pick<CastingPage, 'made' | 'fitments'>, cip
   if (joined.length > 0) lanes.push({ kind: 'band', name: 'its machines built', look: 'hatched', bands: joined.map(bandOf) });
   for (const [place, cipher] of used.entries()) {
     const name = used.length === 1 ? 'cipher in use' : `cipher ${place + 1} in use`;
-    lanes.push({ kind: 'band', name, look: 'outline', bands: [{ ...bandOf(cipher.used), label: `${cipher.title}, ${sayYears(cipher.used)}` }] });
+    lanes.push({
+      kind: 'band',
+      name,
+      look: 'outline',
+      bands: [{ ...bandOf(cipher.used), label: `${cipher.title}, ${sayYears(cipher.used)}` }],
+    });
   }
   return { lanes, focus };
 }
 
 /** Ciphers that were in use at some time while the casting was made; all of them where its years are not on record. */
-export function ciphersInUse<Cipher extends Pick<CipherPage, 'used'>>(made: OpenSpan | null, ciphers: readonly Cipher[]): Cipher[] {
+export function ciphersInUse<Cipher extends Pick<CipherPage, 'used'>>(
+  made: OpenSpan | null,
+  ciphers: readonly Cipher[],
+): Cipher[] {
   return ciphers.filter(({ used }) => made === null || (comesBefore(used.from, made.to) && comesBefore(made.from, used.to)));
 }
 
@@ -59,7 +72,11 @@ export function joinSpans(spans: readonly OpenSpan[]): OpenSpan[] {
   for (const span of sorted) {
     const last = joined.at(-1);
     if (last === undefined || (last.to !== null && span.from !== null && span.from > last.to)) joined.push(span);
-    else joined[joined.length - 1] = { from: last.from, to: last.to === null || span.to === null ? null : last.to > span.to ? last.to : span.to };
+    else
+      joined[joined.length - 1] = {
+        from: last.from,
+        to: last.to === null || span.to === null ? null : last.to > span.to ? last.to : span.to,
+      };
   }
   return joined;
 }

@@ -5,7 +5,7 @@ import { call } from '../../lib/call.ts';
 
 export type CastingsSearch = CallInput<typeof listCastings>['query'];
 
-export const castingKeys = {
+const castingKeys = {
   all: ['castings'] as const,
   list: (search: CastingsSearch) => [...castingKeys.all, 'list', search] as const,
   page: (slug: string) => [...castingKeys.all, 'page', slug] as const,
@@ -23,4 +23,7 @@ export const castingPage = (slug: string) =>
   queryOptions({ queryKey: castingKeys.page(slug), queryFn: ({ signal }) => call(readCasting, { params: { slug }, signal }) });
 
 export const castingHistory = (slug: string) =>
-  queryOptions({ queryKey: castingKeys.history(slug), queryFn: ({ signal }) => call(readCastingHistory, { params: { slug }, signal }) });
+  queryOptions({
+    queryKey: castingKeys.history(slug),
+    queryFn: ({ signal }) => call(readCastingHistory, { params: { slug }, signal }),
+  });

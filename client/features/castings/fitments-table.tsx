@@ -29,7 +29,11 @@ export function FitmentsTable({ fitments, notesOf }: Props) {
             </>
           ),
         },
-        { key: 'serials', header: 'serials', cell: (fitment) => <span className="font-mono text-[15px] whitespace-nowrap">{saySerials(fitment)}</span> },
+        {
+          key: 'serials',
+          header: 'serials',
+          cell: (fitment) => <span className="font-mono text-[15px] whitespace-nowrap">{saySerials(fitment)}</span>,
+        },
         { key: 'built', header: 'built', cell: ({ built }) => (built === null ? 'not on record' : sayOpenSpan(built)) },
         {
           key: 'verdict',
@@ -43,7 +47,11 @@ export function FitmentsTable({ fitments, notesOf }: Props) {
           ),
         },
       ]}
-      empty={<p className="border-y border-rule py-4 text-slag">No machine is on record for it yet. That says nothing about where it goes.</p>}
+      empty={
+        <p className="border-y border-rule py-4 text-slag">
+          No machine is on record for it yet. That says nothing about where it goes.
+        </p>
+      }
     />
   );
 }

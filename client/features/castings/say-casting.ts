@@ -8,5 +8,7 @@ export function sayCasting({ number, pattern }: Pick<CastingPage, 'number' | 'pa
 /** What two castings that followed each other can stand in for, said of the one that is named beside it. */
 export function sayInterchange(interchange: CastingPage['follows'][number]['interchange'], named: 'older' | 'newer'): string {
   if (interchange === 'both-ways') return 'each goes in place of the other';
-  return named === 'newer' ? 'it goes in place of this one, but this one not in place of it' : 'this one goes in place of it, but it not in place of this one';
+  return named === 'newer'
+    ? 'it goes in place of this one, but this one not in place of it'
+    : 'this one goes in place of it, but it not in place of this one';
 }

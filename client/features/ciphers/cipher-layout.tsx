@@ -10,12 +10,16 @@ export function CipherLayout({ definition: { fields, symbolSets } }: { readonly 
         <li key={place} className="min-w-28 flex-1 basis-36">
           <Places field={field} />
           <p className="mt-2 border-t border-graphite pt-1 font-semibold">{capital(sayField(field))}</p>
-          <p className="text-[15px] leading-snug text-slag">{[sayWidth(field), sayScript(field), ...fieldRemarks(field, symbolSets)].filter((part) => part !== '').join('; ')}</p>
+          <p className="text-[15px] leading-snug text-slag">
+            {[sayWidth(field), sayScript(field), ...fieldRemarks(field, symbolSets)].filter((part) => part !== '').join('; ')}
+          </p>
         </li>
       ))}
     </ol>
   );
 }
+
+const PLACE = 'grid h-12 w-9 place-items-center rounded border border-edge bg-paper font-mono text-[22px] font-bold';
 
 function Places({ field }: { readonly field: FieldDefinition }) {
   const { least, most } = widthOf(field);
@@ -25,7 +29,7 @@ function Places({ field }: { readonly field: FieldDefinition }) {
       {Array.from({ length: Math.max(most, text.length) }, (_, place) => (
         <span
           key={place}
-          className={`grid h-12 w-9 place-items-center rounded border bg-paper font-mono text-[22px] font-bold ${place < least ? 'border-edge' : 'border-dashed border-edge'}`}
+          className={`${PLACE} ${place < least ? '' : 'border-dashed'}`}
         >
           {text[place] ?? ''}
         </span>

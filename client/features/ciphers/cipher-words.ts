@@ -1,4 +1,12 @@
-import type { CipherDefinition, DateField, FieldDefinition, FieldKind, FieldWidth, SymbolSet, WeekRule } from '#domain/ciphers/definition.ts';
+import type {
+  CipherDefinition,
+  DateField,
+  FieldDefinition,
+  FieldKind,
+  FieldWidth,
+  SymbolSet,
+  WeekRule,
+} from '#domain/ciphers/definition.ts';
 import { civilOf } from '#domain/dates/day.ts';
 import { dayFrom } from '../../lib/say-date.ts';
 import { sayCount } from '../../lib/say-number.ts';
@@ -18,7 +26,20 @@ const WEEKS: Readonly<Record<WeekRule, string>> = {
   'first-full-sunday': 'week 1 is the first full week from Sunday to Saturday',
 };
 
-const MONTHS = ['January', 'February', 'March', 'April', 'May', 'June', 'July', 'August', 'September', 'October', 'November', 'December'] as const;
+const MONTHS = [
+  'January',
+  'February',
+  'March',
+  'April',
+  'May',
+  'June',
+  'July',
+  'August',
+  'September',
+  'October',
+  'November',
+  'December',
+] as const;
 const QUARTERS = ['January to March', 'April to June', 'July to September', 'October to December'] as const;
 
 /** What a field is called: `month`, `fixed`, or the name a detail was given. */
@@ -67,7 +88,9 @@ export function fieldRemarks(field: FieldDefinition, sets: CipherDefinition['sym
 /** Symbols of a `digits` set in the order 1 to 9 and 0, where every digit has one symbol: the key as it was kept in mind. */
 export function keyOf(set: SymbolSet): string | null {
   if (set.kind !== 'digits') return null;
-  const symbols = ['1', '2', '3', '4', '5', '6', '7', '8', '9', '0'].map((digit) => Object.keys(set.symbols).filter((symbol) => set.symbols[symbol] === digit));
+  const symbols = ['1', '2', '3', '4', '5', '6', '7', '8', '9', '0'].map((digit) =>
+    Object.keys(set.symbols).filter((symbol) => set.symbols[symbol] === digit),
+  );
   return symbols.every(({ length }) => length === 1) ? symbols.flat().join('') : null;
 }
 
@@ -77,14 +100,22 @@ export type SymbolLine = { readonly symbol: string; readonly means: string };
  * What each symbol of a set stands for in a field: months and quarters by name, years spelled out over the cipher's life
  * (up to `asOf` where it is still in use), a digit as it is.
  */
-export function symbolLines(set: SymbolSet, field: DateField | 'other', used: { readonly from: string; readonly to: string | null }, asOf: string): SymbolLine[] {
+export function symbolLines(
+  set: SymbolSet,
+  field: DateField | 'other',
+  used: { readonly from: string; readonly to: string | null },
+  asOf: string,
+): SymbolLine[] {
   if (set.kind === 'digits') {
     const lines = Object.entries(set.symbols)
       .map(([symbol, digit]) => ({ symbol, means: digit }))
-      .toSorted((one, other) => (Number(one.means) + 9) % 10 - ((Number(other.means) + 9) % 10));
+      .toSorted((one, other) => ((Number(one.means) + 9) % 10) - ((Number(other.means) + 9) % 10));
     return set.repeater === undefined ? lines : [...lines, { symbol: set.repeater, means: 'the figure before it again' }];
   }
-  return Object.entries(set.symbols).map(([symbol, value]) => ({ symbol, means: sayValues(typeof value === 'number' ? [value] : value, field, set.repeatsEvery, used, asOf) }));
+  return Object.entries(set.symbols).map(([symbol, value]) => ({
+    symbol,
+    means: sayValues(typeof value === 'number' ? [value] : value, field, set.repeatsEvery, used, asOf),
+  }));
 }
 
 function sayValues(
@@ -100,7 +131,9 @@ function sayValues(
   const first = civilOf(dayFrom(used.from)).year;
   const last = civilOf(dayFrom(used.to ?? asOf)).year;
   const years = Array.from({ length: last - first + 1 }, (_, place) => first + place);
-  const meant = years.filter((year) => values.some((value) => (((year - value) % repeatsEvery) + repeatsEvery) % repeatsEvery === 0));
+  const meant = years.filter((year) =>
+    values.some((value) => (((year - value) % repeatsEvery) + repeatsEvery) % repeatsEvery === 0),
+  );
   return meant.length === 0 ? 'no year in use' : meant.join(', ');
 }
 

@@ -5,7 +5,7 @@ import { call } from '../../lib/call.ts';
 
 export type CiphersSearch = CallInput<typeof listCiphers>['query'];
 
-export const cipherKeys = {
+const cipherKeys = {
   all: ['ciphers'] as const,
   list: (search: CiphersSearch) => [...cipherKeys.all, 'list', search] as const,
   page: (slug: string) => [...cipherKeys.all, 'page', slug] as const,
@@ -23,4 +23,7 @@ export const cipherPage = (slug: string) =>
   queryOptions({ queryKey: cipherKeys.page(slug), queryFn: ({ signal }) => call(readCipher, { params: { slug }, signal }) });
 
 export const cipherHistory = (slug: string) =>
-  queryOptions({ queryKey: cipherKeys.history(slug), queryFn: ({ signal }) => call(readCipherHistory, { params: { slug }, signal }) });
+  queryOptions({
+    queryKey: cipherKeys.history(slug),
+    queryFn: ({ signal }) => call(readCipherHistory, { params: { slug }, signal }),
+  });

@@ -34,11 +34,7 @@ export function SymbolSets({ definition, asOf }: Props) {
           </section>
         );
       })}
-      {inFigures.length > 0 && (
-        <p>
-          {Object.keys(definition.symbolSets).length === 0 ? 'Everything is in figures' : `In figures: ${sayList(inFigures.map(sayField), 'and')}`}, 0 to 9 as they are.
-        </p>
-      )}
+      {inFigures.length > 0 && <p>In figures, 0 to 9 as they are: {sayList(inFigures.map(sayField), 'and')}.</p>}
     </div>
   );
 }
@@ -54,7 +50,11 @@ function KeyTable({ name, lines }: { readonly name: string; readonly lines: read
         <thead>
           <tr>
             {figures.map(({ symbol }) => (
-              <th key={symbol} scope="col" className="w-8 border border-rule bg-paper py-1 font-mono text-[19px] font-bold roomy:w-11">
+              <th
+                key={symbol}
+                scope="col"
+                className="w-8 border border-rule bg-paper py-1 font-mono text-[19px] font-bold roomy:w-11"
+              >
                 {symbol}
               </th>
             ))}
@@ -82,7 +82,9 @@ function KeyTable({ name, lines }: { readonly name: string; readonly lines: read
 function SymbolList({ lines }: { readonly lines: readonly SymbolLine[] }) {
   const isLong = lines.some(({ means }) => means.length > 12);
   return (
-    <dl className={`grid gap-x-6 ${isLong ? 'roomy:grid-cols-2 wide:grid-cols-3' : 'grid-cols-2 roomy:grid-cols-3 wide:grid-cols-4'}`}>
+    <dl
+      className={`grid gap-x-6 ${isLong ? 'roomy:grid-cols-2 wide:grid-cols-3' : 'grid-cols-2 roomy:grid-cols-3 wide:grid-cols-4'}`}
+    >
       {lines.map(({ symbol, means }) => (
         <div key={symbol} className="flex items-baseline gap-3 border-b border-rule py-1.5">
           <dt className="min-w-6 font-mono font-bold">{symbol}</dt>

@@ -5,7 +5,7 @@ import { call } from '../../lib/call.ts';
 
 export type MakersSearch = CallInput<typeof listMakers>['query'];
 
-export const makerKeys = {
+const makerKeys = {
   all: ['makers'] as const,
   list: (search: MakersSearch) => [...makerKeys.all, 'list', search] as const,
   page: (slug: string) => [...makerKeys.all, 'page', slug] as const,
@@ -23,4 +23,7 @@ export const makerPage = (slug: string) =>
   queryOptions({ queryKey: makerKeys.page(slug), queryFn: ({ signal }) => call(readMaker, { params: { slug }, signal }) });
 
 export const makerHistory = (slug: string) =>
-  queryOptions({ queryKey: makerKeys.history(slug), queryFn: ({ signal }) => call(readMakerHistory, { params: { slug }, signal }) });
+  queryOptions({
+    queryKey: makerKeys.history(slug),
+    queryFn: ({ signal }) => call(readMakerHistory, { params: { slug }, signal }),
+  });

@@ -12,7 +12,12 @@ export function MakersTable({ rows, stale = false }: { readonly rows: readonly M
       stale={stale}
       rowKey={({ id }) => id}
       columns={[
-        { key: 'name', header: 'Maker', rowHeader: true, cell: (maker) => <Link to={paths.maker(maker.slug)}>{maker.name}</Link> },
+        {
+          key: 'name',
+          header: 'Maker',
+          rowHeader: true,
+          cell: (maker) => <Link to={paths.maker(maker.slug)}>{maker.name}</Link>,
+        },
         { key: 'place', header: 'place', cell: ({ place }) => place ?? 'not on record' },
         { key: 'active', header: 'years', cell: ({ active }) => sayYears(active) },
         { key: 'work', header: 'on record', cell: (maker) => sayHoldings(maker) },

@@ -5,7 +5,7 @@ import { call } from '../../lib/call.ts';
 
 export type ModelsSearch = CallInput<typeof listModels>['query'];
 
-export const modelKeys = {
+const modelKeys = {
   all: ['models'] as const,
   list: (search: ModelsSearch) => [...modelKeys.all, 'list', search] as const,
   page: (slug: string) => [...modelKeys.all, 'page', slug] as const,
@@ -24,7 +24,10 @@ export const modelPage = (slug: string) =>
   queryOptions({ queryKey: modelKeys.page(slug), queryFn: ({ signal }) => call(readModel, { params: { slug }, signal }) });
 
 export const modelHistory = (slug: string) =>
-  queryOptions({ queryKey: modelKeys.history(slug), queryFn: ({ signal }) => call(readModelHistory, { params: { slug }, signal }) });
+  queryOptions({
+    queryKey: modelKeys.history(slug),
+    queryFn: ({ signal }) => call(readModelHistory, { params: { slug }, signal }),
+  });
 
 /** When the model's machine with this serial was built; asked only once a serial is typed. */
 export const modelBuild = (slug: string, serial: string) =>

@@ -19,7 +19,9 @@ export type SerialRow = {
 /** The accounts of a series, the register's own reading first. */
 export function accountsOf({ ranges }: Pick<ModelSeries, 'ranges'>): Account[] {
   const accounts = new Map(ranges.map(({ account, preferred }) => [account.id, { ...account, preferred }]));
-  return [...accounts.values()].toSorted((one, other) => Number(other.preferred) - Number(one.preferred) || one.title.localeCompare(other.title));
+  return [...accounts.values()].toSorted(
+    (one, other) => Number(other.preferred) - Number(one.preferred) || one.title.localeCompare(other.title),
+  );
 }
 
 /**
@@ -43,7 +45,13 @@ export function serialRows(ranges: readonly ModelRange[]): SerialRow[] {
     const next = cuts[place + 1];
     if (next === undefined && !isOpen) return [];
     const held = ranges.filter((range) => BigInt(range.first) <= first && (range.last === null || first <= BigInt(range.last)));
-    return [{ first: String(first), last: next === undefined ? null : String(next - 1n), ranges: new Map(held.map((range) => [range.account.id, range])) }];
+    return [
+      {
+        first: String(first),
+        last: next === undefined ? null : String(next - 1n),
+        ranges: new Map(held.map((range) => [range.account.id, range])),
+      },
+    ];
   });
 }
 

@@ -7,7 +7,7 @@ import { listAll } from '../../lib/list-all.ts';
 
 export type PartTypesSearch = CallInput<typeof listPartTypes>['query'];
 
-export const partTypeKeys = {
+const partTypeKeys = {
   all: ['part-types'] as const,
   list: (search: PartTypesSearch) => [...partTypeKeys.all, 'list', search] as const,
   page: (slug: string) => [...partTypeKeys.all, 'page', slug] as const,
@@ -25,12 +25,17 @@ export const partTypePage = (slug: string) =>
   queryOptions({ queryKey: partTypeKeys.page(slug), queryFn: ({ signal }) => call(readPartType, { params: { slug }, signal }) });
 
 export const partTypeHistory = (slug: string) =>
-  queryOptions({ queryKey: partTypeKeys.history(slug), queryFn: ({ signal }) => call(readPartTypeHistory, { params: { slug }, signal }) });
+  queryOptions({
+    queryKey: partTypeKeys.history(slug),
+    queryFn: ({ signal }) => call(readPartTypeHistory, { params: { slug }, signal }),
+  });
 
 /** Every part type, for a filter to choose from. */
 export const partTypesToChoose = () =>
   queryOptions({
     queryKey: [...partTypeKeys.all, 'to choose'],
     queryFn: ({ signal }) =>
-      listAll((after) => call(listPartTypes, { query: { limit: LIMITS.page.most, ...(after === undefined ? {} : { after }) }, signal })),
+      listAll((after) =>
+        call(listPartTypes, { query: { limit: LIMITS.page.most, ...(after === undefined ? {} : { after }) }, signal }),
+      ),
   });

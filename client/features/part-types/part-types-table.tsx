@@ -6,7 +6,13 @@ import { DataTable } from '../../ui/data-table.tsx';
 
 export type PartTypeItem = z.infer<typeof PartTypeItemSchema>;
 
-export function PartTypesTable({ rows, stale = false }: { readonly rows: readonly PartTypeItem[] | null; readonly stale?: boolean }) {
+export function PartTypesTable({
+  rows,
+  stale = false,
+}: {
+  readonly rows: readonly PartTypeItem[] | null;
+  readonly stale?: boolean;
+}) {
   return (
     <DataTable
       caption="Part types"
@@ -14,11 +20,17 @@ export function PartTypesTable({ rows, stale = false }: { readonly rows: readonl
       stale={stale}
       rowKey={({ id }) => id}
       columns={[
-        { key: 'name', header: 'Part type', rowHeader: true, cell: ({ slug, name }) => <Link to={paths.partType(slug)}>{name}</Link> },
+        {
+          key: 'name',
+          header: 'Part type',
+          rowHeader: true,
+          cell: ({ slug, name }) => <Link to={paths.partType(slug)}>{name}</Link>,
+        },
         {
           key: 'castings',
           header: 'castings',
-          cell: ({ slug, castings }) => (castings === 0 ? 'none yet' : <Link to={paths.castings(`?partType=${slug}`)}>{castings}</Link>),
+          cell: ({ slug, castings }) =>
+            castings === 0 ? 'none yet' : <Link to={paths.castings(`?partType=${slug}`)}>{castings}</Link>,
         },
       ]}
     />

@@ -5,7 +5,7 @@ import { call } from '../../lib/call.ts';
 
 export type SerialRangesSearch = CallInput<typeof listSerialRanges>['query'];
 
-export const serialRangeKeys = {
+const serialRangeKeys = {
   all: ['serial-ranges'] as const,
   list: (search: SerialRangesSearch) => [...serialRangeKeys.all, 'list', search] as const,
   page: (slug: string) => [...serialRangeKeys.all, 'page', slug] as const,
@@ -20,7 +20,13 @@ export const serialRangesList = (search: SerialRangesSearch) =>
   });
 
 export const serialRangePage = (slug: string) =>
-  queryOptions({ queryKey: serialRangeKeys.page(slug), queryFn: ({ signal }) => call(readSerialRange, { params: { slug }, signal }) });
+  queryOptions({
+    queryKey: serialRangeKeys.page(slug),
+    queryFn: ({ signal }) => call(readSerialRange, { params: { slug }, signal }),
+  });
 
 export const serialRangeHistory = (slug: string) =>
-  queryOptions({ queryKey: serialRangeKeys.history(slug), queryFn: ({ signal }) => call(readSerialRangeHistory, { params: { slug }, signal }) });
+  queryOptions({
+    queryKey: serialRangeKeys.history(slug),
+    queryFn: ({ signal }) => call(readSerialRangeHistory, { params: { slug }, signal }),
+  });

@@ -5,7 +5,13 @@ import { saySerials } from '../../lib/say-serials.ts';
 import { DataTable } from '../../ui/data-table.tsx';
 import { sayRangeDates } from './say-range.ts';
 
-export function SerialRangesTable({ rows, stale = false }: { readonly rows: readonly SerialRangeItem[] | null; readonly stale?: boolean }) {
+export function SerialRangesTable({
+  rows,
+  stale = false,
+}: {
+  readonly rows: readonly SerialRangeItem[] | null;
+  readonly stale?: boolean;
+}) {
   return (
     <DataTable
       caption="Serial ranges"
@@ -25,7 +31,11 @@ export function SerialRangesTable({ rows, stale = false }: { readonly rows: read
         },
         { key: 'model', header: 'model', cell: ({ model }) => <Link to={paths.model(model.slug)}>{model.name}</Link> },
         { key: 'dates', header: 'built', cell: (range) => sayRangeDates(range) },
-        { key: 'account', header: 'account', cell: ({ account, preferred }) => (preferred ? `${account.title} (our reading)` : account.title) },
+        {
+          key: 'account',
+          header: 'account',
+          cell: ({ account, preferred }) => (preferred ? `${account.title} (our reading)` : account.title),
+        },
       ]}
     />
   );

@@ -65,7 +65,9 @@ export function pathOfFact({ kind, slug }: BackedFact): string | null {
 }
 
 /** The facts a source stands behind, by kind, in the order the kinds are first met. */
-export function groupFacts(behind: readonly BackedFact[]): readonly { readonly kind: BackedFact['kind']; readonly facts: readonly BackedFact[] }[] {
+export function groupFacts(
+  behind: readonly BackedFact[],
+): readonly { readonly kind: BackedFact['kind']; readonly facts: readonly BackedFact[] }[] {
   const groups = new Map<BackedFact['kind'], BackedFact[]>();
   for (const fact of behind) groups.set(fact.kind, [...(groups.get(fact.kind) ?? []), fact]);
   return [...groups].map(([kind, facts]) => ({ kind, facts }));

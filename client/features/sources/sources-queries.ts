@@ -5,7 +5,7 @@ import { call } from '../../lib/call.ts';
 
 export type SourcesSearch = CallInput<typeof listSources>['query'];
 
-export const sourceKeys = {
+const sourceKeys = {
   all: ['sources'] as const,
   list: (search: SourcesSearch) => [...sourceKeys.all, 'list', search] as const,
   page: (slug: string) => [...sourceKeys.all, 'page', slug] as const,
@@ -23,4 +23,7 @@ export const sourcePage = (slug: string) =>
   queryOptions({ queryKey: sourceKeys.page(slug), queryFn: ({ signal }) => call(readSource, { params: { slug }, signal }) });
 
 export const sourceHistory = (slug: string) =>
-  queryOptions({ queryKey: sourceKeys.history(slug), queryFn: ({ signal }) => call(readSourceHistory, { params: { slug }, signal }) });
+  queryOptions({
+    queryKey: sourceKeys.history(slug),
+    queryFn: ({ signal }) => call(readSourceHistory, { params: { slug }, signal }),
+  });

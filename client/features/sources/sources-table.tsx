@@ -15,7 +15,12 @@ export function SourcesTable({ rows, stale = false }: { readonly rows: readonly 
       stale={stale}
       rowKey={({ id }) => id}
       columns={[
-        { key: 'title', header: 'Source', rowHeader: true, cell: ({ slug, title }) => <Link to={paths.source(slug)}>{title}</Link> },
+        {
+          key: 'title',
+          header: 'Source',
+          rowHeader: true,
+          cell: ({ slug, title }) => <Link to={paths.source(slug)}>{title}</Link>,
+        },
         { key: 'kind', header: 'kind', cell: ({ kind }) => saySourceKind(kind) },
         { key: 'facts', header: 'stands behind', cell: ({ facts }) => (facts === 1 ? '1 fact' : `${facts} facts`) },
       ]}

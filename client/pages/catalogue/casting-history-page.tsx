@@ -10,7 +10,10 @@ import { slugOf, useSlug } from './slug-param.ts';
 export function loader(queryClient: QueryClient): LoaderFunction {
   return async ({ params }) => {
     const slug = slugOf(params);
-    await Promise.all([queryClient.query({ ...castingPage(slug), staleTime: 'static' }), queryClient.query({ ...castingHistory(slug), staleTime: 'static' })]);
+    await Promise.all([
+      queryClient.query({ ...castingPage(slug), staleTime: 'static' }),
+      queryClient.query({ ...castingHistory(slug), staleTime: 'static' }),
+    ]);
     return null;
   };
 }

@@ -43,7 +43,8 @@ export function Component() {
         title={`${sayCasting(casting)}, ${casting.partType.name.toLowerCase()}`}
         above={
           <>
-            <Link to={paths.maker(casting.maker.slug)}>{casting.maker.name}</Link> · <Link to={paths.partType(casting.partType.slug)}>{casting.partType.name}</Link>
+            <Link to={paths.maker(casting.maker.slug)}>{casting.maker.name}</Link> ·{' '}
+            <Link to={paths.partType(casting.partType.slug)}>{casting.partType.name}</Link>
           </>
         }
       >
@@ -74,7 +75,11 @@ export function Component() {
             <Block heading="How to tell it" margin={sourceMargin(notes.beside('tells'))}>
               <FactList
                 names="cast"
-                facts={casting.tells.map(({ place, tell }, ordinal) => ({ name: place, value: sentence(tell), notes: notes.numbersOf(`tells.${ordinal + 1}`) }))}
+                facts={casting.tells.map(({ place, tell }, ordinal) => ({
+                  name: place,
+                  value: sentence(tell),
+                  notes: notes.numbersOf(`tells.${ordinal + 1}`),
+                }))}
               />
             </Block>
           )}
@@ -93,7 +98,10 @@ export function Component() {
 type Numbers = (key: string) => readonly number[];
 
 function notesOf({ provenance, tells, follows, followedBy, fitments }: CastingPage) {
-  const fields = ['made', 'pouredBy', 'partNumbers', 'note'].map((field) => ({ key: field, provenance: provenanceOfField(provenance, field) }));
+  const fields = ['made', 'pouredBy', 'partNumbers', 'note'].map((field) => ({
+    key: field,
+    provenance: provenanceOfField(provenance, field),
+  }));
   return pageNotes([
     {
       block: 'what',
@@ -104,28 +112,42 @@ function notesOf({ provenance, tells, follows, followedBy, fitments }: CastingPa
         ...followedBy.map((one) => ({ key: `followed by ${one.casting.slug}`, provenance: one.provenance })),
       ],
     },
-    { block: 'tells', facts: tells.map((_, ordinal) => ({ key: `tells.${ordinal + 1}`, provenance: provenanceOfField(provenance, `tells.${ordinal + 1}`) })) },
+    {
+      block: 'tells',
+      facts: tells.map((_, ordinal) => ({
+        key: `tells.${ordinal + 1}`,
+        provenance: provenanceOfField(provenance, `tells.${ordinal + 1}`),
+      })),
+    },
     { block: 'fitments', facts: fitments.map(({ id, provenance: behind }) => ({ key: id, provenance: behind })) },
   ]);
 }
 
 function whatItIs(casting: CastingPage, numbersOf: Numbers): Fact[] {
-  const { made, pouredBy, partNumbers, follows, followedBy, note } = casting;
+  const { partType, made, pouredBy, partNumbers, follows, followedBy, note } = casting;
   return [
+    { name: 'Part type', value: <Link to={paths.partType(partType.slug)}>{partType.name}</Link>, notes: numbersOf('whole') },
     { name: 'Made', value: made === null ? 'years not on record' : sayOpenSpan(made), notes: numbersOf('made') },
     {
       name: 'Poured by',
       value: pouredBy === null ? 'its maker, as far as is known' : <Link to={paths.maker(pouredBy.slug)}>{pouredBy.name}</Link>,
       notes: pouredBy === null ? [] : numbersOf('pouredBy'),
     },
-    ...(partNumbers.length === 0 ? [] : [{ name: 'Machined as part', value: <PartNumbers numbers={partNumbers} />, notes: numbersOf('partNumbers') }]),
+    ...(partNumbers.length === 0
+      ? []
+      : [{ name: 'Machined as part', value: <PartNumbers numbers={partNumbers} />, notes: numbersOf('partNumbers') }]),
     ...follows.map((one) => succession('Follows', one, 'older', numbersOf(`follows ${one.casting.slug}`))),
     ...followedBy.map((one) => succession('Followed by', one, 'newer', numbersOf(`followed by ${one.casting.slug}`))),
     ...(note === null ? [] : [{ name: 'Note', value: note, notes: numbersOf('note') }]),
   ];
 }
 
-function succession(name: string, { casting, interchange, note }: CastingPage['follows'][number], named: 'older' | 'newer', notes: readonly number[]): Fact {
+function succession(
+  name: string,
+  { casting, interchange, note }: CastingPage['follows'][number],
+  named: 'older' | 'newer',
+  notes: readonly number[],
+): Fact {
   return {
     name,
     notes,
@@ -184,8 +206,15 @@ function RuleOfCasting({ casting }: { readonly casting: CastingPage }) {
 }
 
 /** The ciphers its date may be in; those out of use all the while it was made are named apart. */
-function CipherList({ casting: { made, ciphers }, loaded }: { readonly casting: CastingPage; readonly loaded: readonly CipherPage[] }) {
-  if (ciphers.length === 0) return <p className="mt-3 text-slag">No cipher of its maker is on record, so a date on it can’t be decoded yet.</p>;
+function CipherList({
+  casting: { made, ciphers },
+  loaded,
+}: {
+  readonly casting: CastingPage;
+  readonly loaded: readonly CipherPage[];
+}) {
+  if (ciphers.length === 0)
+    return <p className="mt-3 text-slag">No cipher of its maker is on record, so a date on it can’t be decoded yet.</p>;
   const inUse = ciphersInUse(made, loaded);
   const outOfUse = loaded.filter((cipher) => !inUse.includes(cipher));
   const likely = ciphers.filter(({ slug }) => !outOfUse.some((cipher) => cipher.slug === slug));

@@ -47,9 +47,27 @@ export function Component() {
               </>
             }
           />
-          <ChoiceFilter label="Maker" value={query.maker} choices={makers} all="Any maker" onChange={(maker) => change({ maker, model: null })} />
-          <ChoiceFilter label="Part type" value={query.partType} choices={partTypes} all="Any part" onChange={(partType) => change({ partType })} />
-          <ChoiceFilter label="Goes on model" value={query.model} choices={models} all="Any model" onChange={(model) => change({ model })} />
+          <ChoiceFilter
+            label="Maker"
+            value={query.maker}
+            choices={makers}
+            all="Any maker"
+            onChange={(maker) => change({ maker, model: null })}
+          />
+          <ChoiceFilter
+            label="Part type"
+            value={query.partType}
+            choices={partTypes}
+            all="Any part"
+            onChange={(partType) => change({ partType })}
+          />
+          <ChoiceFilter
+            label="Goes on model"
+            value={query.model}
+            choices={models}
+            all="Any model"
+            onChange={(model) => change({ model })}
+          />
           <OrderFilter value={query.sort} orders={ORDERS} onChange={(sort) => change({ sort })} />
           <TextFilter label="Words" value={query.q ?? ''} onChange={(q) => change({ q })} />
         </>

@@ -20,7 +20,13 @@ import { NotationHelp } from './notation-help.tsx';
 
 /** `B?40*` */
 const EXAMPLE: Reading = {
-  glyphs: [{ kind: 'sure', glyph: 'B' }, { kind: 'unread' }, { kind: 'sure', glyph: '4' }, { kind: 'sure', glyph: '0' }, { kind: 'run' }],
+  glyphs: [
+    { kind: 'sure', glyph: 'B' },
+    { kind: 'unread' },
+    { kind: 'sure', glyph: '4' },
+    { kind: 'sure', glyph: '0' },
+    { kind: 'run' },
+  ],
   breaks: [],
 };
 
@@ -48,7 +54,9 @@ export function Component() {
               <div className="space-y-3 text-[15px] leading-snug text-slag">
                 <p className="font-semibold text-graphite">What can’t be read</p>
                 <NotationHelp />
-                <p>Photograph a mark before you clean it. Old paint may hold lead, and a wire wheel blurs the letters for good.</p>
+                <p>
+                  Photograph a mark before you clean it. Old paint may hold lead, and a wire wheel blurs the letters for good.
+                </p>
               </div>
             }
           >
@@ -132,7 +140,8 @@ function NumberSearch() {
 function Makers() {
   const { data, error, refetch } = useQuery(makersList({}));
   if (error !== null) return <FailureNote error={error} onAgain={() => void refetch()} />;
-  if (data?.items.length === 0) return <EmptyState title="No makers on record yet">Makers and foundries will stand here.</EmptyState>;
+  if (data?.items.length === 0)
+    return <EmptyState title="No makers on record yet">Makers and foundries will stand here.</EmptyState>;
   return (
     <>
       <MakersTable rows={data?.items ?? null} />

@@ -13,7 +13,10 @@ export function useMakerChoices(): readonly Choice[] | undefined {
 export function useModelChoices(maker: string | undefined): readonly Choice[] | undefined {
   return useQuery(modelsToChoose())
     .data?.filter((model) => maker === undefined || model.maker.slug === maker)
-    .map(({ slug, name, maker: { name: makerName } }) => ({ value: slug, text: maker === undefined ? `${name}, ${makerName}` : name }));
+    .map(({ slug, name, maker: { name: makerName } }) => ({
+      value: slug,
+      text: maker === undefined ? `${name}, ${makerName}` : name,
+    }));
 }
 
 export function usePartTypeChoices(): readonly Choice[] | undefined {

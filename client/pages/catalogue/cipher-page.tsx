@@ -33,7 +33,13 @@ export function Component() {
   const { data: cipher } = useSuspenseQuery(cipherPage(useSlug()));
   const { definition } = cipher;
   const notes = pageNotes([
-    { block: 'layout', facts: ['definition', 'used', 'note'].map((field) => ({ key: field, provenance: provenanceOfField(cipher.provenance, field) })) },
+    {
+      block: 'layout',
+      facts: ['definition', 'used', 'note'].map((field) => ({
+        key: field,
+        provenance: provenanceOfField(cipher.provenance, field),
+      })),
+    },
   ]);
   return (
     <>
@@ -63,7 +69,12 @@ export function Component() {
           >
             <CipherLayout definition={definition} />
             <p className="no-print mt-6">
-              <ButtonLink weight="primary" to={paths.decode(`?${writeDecodeState({ ...NOTHING_SAID, maker: cipher.maker.slug, cipher: cipher.slug }).toString()}`)}>
+              <ButtonLink
+                weight="primary"
+                to={paths.decode(
+                  `?${writeDecodeState({ ...NOTHING_SAID, maker: cipher.maker.slug, cipher: cipher.slug }).toString()}`,
+                )}
+              >
                 Decode a mark in this cipher
               </ButtonLink>
             </p>
@@ -80,9 +91,16 @@ export function Component() {
                 { name: 'In use', value: sayOpenSpan(cipher.used), notes: notes.numbersOf('used') },
                 {
                   name: 'Poured by',
-                  value: cipher.foundry === null || cipher.foundry.slug === cipher.maker.slug ? 'its maker’s own foundry' : <Link to={paths.maker(cipher.foundry.slug)}>{cipher.foundry.name}</Link>,
+                  value:
+                    cipher.foundry === null || cipher.foundry.slug === cipher.maker.slug ? (
+                      'its maker’s own foundry'
+                    ) : (
+                      <Link to={paths.maker(cipher.foundry.slug)}>{cipher.foundry.name}</Link>
+                    ),
                 },
-                ...(definition.yearStart === undefined ? [] : [{ name: 'Years begin', value: `${sayYearStart(definition.yearStart)}, for twelve months` }]),
+                ...(definition.yearStart === undefined
+                  ? []
+                  : [{ name: 'Years begin', value: `${sayYearStart(definition.yearStart)}, for twelve months` }]),
                 ...(cipher.note === null ? [] : [{ name: 'Note', value: cipher.note, notes: notes.numbersOf('note') }]),
               ]}
             />
@@ -106,7 +124,11 @@ function Exceptions({ definition: { exceptions = [] } }: Pick<CipherPage, 'defin
         columns={[
           { key: 'marks', header: 'Marks', rowHeader: true, cell: ({ fields }) => <ExceptionFields fields={fields} /> },
           { key: 'mean', header: 'mean', cell: (exception) => saySpan(exception) },
-          { key: 'place', header: 'and', cell: ({ replaces = true }) => (replaces ? 'not what the table says' : 'what the table says too') },
+          {
+            key: 'place',
+            header: 'and',
+            cell: ({ replaces = true }) => (replaces ? 'not what the table says' : 'what the table says too'),
+          },
         ]}
       />
     </div>

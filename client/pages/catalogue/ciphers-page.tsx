@@ -27,7 +27,13 @@ export function Component() {
       filters={
         <>
           <TextFilter label="Title" value={query.q ?? ''} onChange={(q) => change({ q })} />
-          <ChoiceFilter label="Maker" value={query.maker} choices={makers} all="Any maker" onChange={(maker) => change({ maker })} />
+          <ChoiceFilter
+            label="Maker"
+            value={query.maker}
+            choices={makers}
+            all="Any maker"
+            onChange={(maker) => change({ maker })}
+          />
           <OrderFilter value={query.sort} orders={ORDERS} onChange={(sort) => change({ sort })} />
         </>
       }

@@ -13,7 +13,10 @@ export function FactList({ facts, names = 'said' }: { readonly facts: readonly F
   return (
     <dl>
       {facts.map(({ name, value, notes = [] }, place) => (
-        <div key={`${name} ${place}`} className="grid break-inside-avoid grid-cols-[104px_minmax(0,1fr)] gap-x-4 border-b border-rule py-3 roomy:grid-cols-[152px_minmax(0,1fr)]">
+        <div
+          key={`${name} ${place}`}
+          className="grid break-inside-avoid grid-cols-[104px_minmax(0,1fr)] gap-x-4 border-b border-rule py-3 roomy:grid-cols-[152px_minmax(0,1fr)]"
+        >
           <dt className={names === 'said' ? 'text-slag italic' : 'font-semibold'}>{name}</dt>
           <dd>
             {value}

@@ -21,7 +21,11 @@ type Props = {
 export function HistoryView({ name, path, versions }: Props) {
   return (
     <>
-      <PageTitle title={`History of ${name}`} above={<Link to={path}>{name}</Link>} below="Nothing is overwritten: every version stays, newest first.">
+      <PageTitle
+        title={`History of ${name}`}
+        above={<Link to={path}>{name}</Link>}
+        below="Nothing is overwritten: every version stays, newest first."
+      >
         What changed
       </PageTitle>
       <PartingLine />
@@ -39,7 +43,10 @@ export function HistoryView({ name, path, versions }: Props) {
 function VersionBlock({ entry, before }: { readonly entry: HistoryEntry; readonly before: HistoryEntry | null }) {
   const { version, enteredBy, enteredAt, reason, inForce, payload } = entry;
   return (
-    <Block heading={`Version ${version}`} notes={[{ number: null, heading: enteredBy, body: `entered it on ${sayMoment(enteredAt)}.` }]}>
+    <Block
+      heading={`Version ${version}`}
+      notes={[{ number: null, heading: enteredBy, body: `entered it on ${sayMoment(enteredAt)}.` }]}
+    >
       {inForce && (
         <p className="mb-2 flex items-center gap-1.5 font-semibold text-verdigris">
           <Icon name="check" /> In force

@@ -14,7 +14,15 @@ type TextFilterProps = {
 };
 
 /** A text that narrows the list while it is typed, after a pause. */
-export function TextFilter({ label, value, onChange, hint, error, mono = false, className = 'col-span-2 wide:col-span-1' }: TextFilterProps) {
+export function TextFilter({
+  label,
+  value,
+  onChange,
+  hint,
+  error,
+  mono = false,
+  className = 'col-span-2 wide:col-span-1',
+}: TextFilterProps) {
   const [draft, setDraft] = useDraft(value, onChange);
   return (
     <TextField
@@ -49,7 +57,11 @@ type ChoiceFilterProps = {
 export function ChoiceFilter({ label, value = '', choices = [], all, onChange }: ChoiceFilterProps) {
   const known = value === '' || choices.some((choice) => choice.value === value);
   return (
-    <SelectField label={label} value={value} onChange={(event) => onChange(event.target.value === '' ? null : event.target.value)}>
+    <SelectField
+      label={label}
+      value={value}
+      onChange={(event) => onChange(event.target.value === '' ? null : event.target.value)}
+    >
       <option value="">{all}</option>
       {!known && <option value={value}>{value}</option>}
       {choices.map((choice) => (
@@ -62,10 +74,22 @@ export function ChoiceFilter({ label, value = '', choices = [], all, onChange }:
 }
 
 /** The order of the list; its own order is not written in the address. */
-export function OrderFilter({ value, orders, onChange }: { readonly value: string; readonly orders: readonly Choice[]; readonly onChange: (value: string | null) => void }) {
+export function OrderFilter({
+  value,
+  orders,
+  onChange,
+}: {
+  readonly value: string;
+  readonly orders: readonly Choice[];
+  readonly onChange: (value: string | null) => void;
+}) {
   const [own] = orders;
   return (
-    <SelectField label="In order of" value={value} onChange={(event) => onChange(event.target.value === own?.value ? null : event.target.value)}>
+    <SelectField
+      label="In order of"
+      value={value}
+      onChange={(event) => onChange(event.target.value === own?.value ? null : event.target.value)}
+    >
       {orders.map((order) => (
         <option key={order.value} value={order.value}>
           {order.text}

@@ -12,7 +12,11 @@ import { PageTitle } from '../../ui/page-title.tsx';
 import { PartingLine } from '../../ui/parting-line.tsx';
 import { changeSearch } from './list-search.ts';
 
-export type ListAnswer<Row> = { readonly items: readonly Row[]; readonly next: string | null; readonly total?: number | undefined };
+export type ListAnswer<Row> = {
+  readonly items: readonly Row[];
+  readonly next: string | null;
+  readonly total?: number | undefined;
+};
 
 /** What a list page knows of its query; the fields are those of `useQuery`. */
 export type ListState<Row> = {
@@ -24,6 +28,8 @@ export type ListState<Row> = {
 
 type Props<Row> = {
   readonly title: string;
+  /** Where the list belongs; the catalogue unless another place is said. */
+  readonly above?: ReactNode;
   /** One and many of what is listed: `casting`, `castings`. */
   readonly noun: readonly [one: string, many: string];
   readonly below: string;
@@ -39,14 +45,37 @@ type Props<Row> = {
   readonly table: (rows: readonly Row[] | null, stale: boolean) => ReactNode;
   /** Said when nothing is on record at all. */
   readonly empty: string;
+  /** What to try when nothing matches. */
+  readonly advice?: ReactNode;
 };
 
+/** What helps in the catalogue, where marks are looked for. */
+const LOOK_AGAIN = (
+  <>
+    Take one filter away, or put <code className="font-mono">?</code> for a glyph you are not sure of.
+  </>
+);
+
 /** A list of the catalogue: filters, rows, pages. The address holds all of it. */
-export function ListPage<Row>({ title, noun, below, filters, aside, state, params, narrowed, waiting = null, table, empty }: Props<Row>) {
+export function ListPage<Row>({
+  title,
+  above = <Link to={paths.catalogue()}>Catalogue</Link>,
+  noun,
+  below,
+  filters,
+  aside,
+  state,
+  params,
+  narrowed,
+  waiting = null,
+  table,
+  empty,
+  advice = LOOK_AGAIN,
+}: Props<Row>) {
   const results = useFocusOnNewPage(params.get('after'));
   return (
     <>
-      <PageTitle title={title} above={<Link to={paths.catalogue()}>Catalogue</Link>} below={below}>
+      <PageTitle title={title} above={above} below={below}>
         {title}
       </PageTitle>
       <PartingLine />
@@ -64,7 +93,7 @@ export function ListPage<Row>({ title, noun, below, filters, aside, state, param
               )}
             </search>
             <section ref={results} tabIndex={-1} aria-label={title} className="scroll-mt-4 outline-none">
-              <Results {...{ noun, state, params, narrowed, waiting, table, empty }} />
+              <Results {...{ noun, state, params, narrowed, waiting, table, empty, advice }} />
             </section>
           </Block>
         </PageGrid>
@@ -73,17 +102,21 @@ export function ListPage<Row>({ title, noun, below, filters, aside, state, param
   );
 }
 
-type ResultsProps<Row> = Pick<Props<Row>, 'noun' | 'state' | 'params' | 'narrowed' | 'table' | 'empty'> & { readonly waiting: string | null };
+type ResultsProps<Row> = Pick<Props<Row>, 'noun' | 'state' | 'params' | 'narrowed' | 'table' | 'empty'> & {
+  readonly advice: ReactNode;
+  readonly waiting: string | null;
+};
 
-function Results<Row>({ noun, state, params, narrowed, waiting, table, empty }: ResultsProps<Row>) {
+function Results<Row>({ noun, state, params, narrowed, waiting, table, empty, advice }: ResultsProps<Row>) {
   const { data, error, isPlaceholderData, refetch } = state;
   const [one, many] = noun;
   if (waiting !== null) return <EmptyState title="Not asked yet">{waiting}</EmptyState>;
-  if (error !== null) return isLostPlace(error) ? <LostPlace params={params} /> : <FailureNote error={error} onAgain={() => void refetch()} />;
+  if (error !== null)
+    return isLostPlace(error) ? <LostPlace params={params} /> : <FailureNote error={error} onAgain={() => void refetch()} />;
   if (data?.items.length === 0) {
     return narrowed ? (
       <EmptyState title={`No ${one} matches`} action={<ButtonLink to="?">Take all filters away</ButtonLink>}>
-        Nothing on record is all of what you asked for. Take one filter away, or put <code className="font-mono">?</code> for a glyph you are not sure of.
+        Nothing on record is all of what you asked for. {advice}
         <Live>{`No ${one} matches`}</Live>
       </EmptyState>
     ) : (
@@ -138,7 +171,10 @@ function isLostPlace(error: Error): boolean {
 
 function LostPlace({ params }: { readonly params: URLSearchParams }) {
   return (
-    <EmptyState title="This place in the list is gone" action={<ButtonLink to={searchOf(changeSearch(params, {}))}>First page</ButtonLink>}>
+    <EmptyState
+      title="This place in the list is gone"
+      action={<ButtonLink to={searchOf(changeSearch(params, {}))}>First page</ButtonLink>}
+    >
       The address was cut short, or made for another order. Your filters are kept.
     </EmptyState>
   );

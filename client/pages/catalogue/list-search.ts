@@ -8,7 +8,10 @@ export type ReadSearch<Schema extends z.ZodObject> = {
   readonly refused: Readonly<Partial<Record<string, string>>>;
 };
 
-/** Reads a list's search from the address through the schema that the register itself checks it with. Names the list does not know are passed over. */
+/**
+ * Reads a list's search from the address through the schema that the register itself checks it with. Names the list does not know
+ * are passed over.
+ */
 export function readSearch<Schema extends z.ZodObject>(schema: Schema, params: URLSearchParams): ReadSearch<Schema> {
   const given = Object.fromEntries([...params].filter(([name, value]) => name in schema.shape && value.trim() !== ''));
   const parsed = schema.safeParse(given);

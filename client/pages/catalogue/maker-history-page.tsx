@@ -9,7 +9,10 @@ import { slugOf, useSlug } from './slug-param.ts';
 export function loader(queryClient: QueryClient): LoaderFunction {
   return async ({ params }) => {
     const slug = slugOf(params);
-    await Promise.all([queryClient.query({ ...makerPage(slug), staleTime: 'static' }), queryClient.query({ ...makerHistory(slug), staleTime: 'static' })]);
+    await Promise.all([
+      queryClient.query({ ...makerPage(slug), staleTime: 'static' }),
+      queryClient.query({ ...makerHistory(slug), staleTime: 'static' }),
+    ]);
     return null;
   };
 }

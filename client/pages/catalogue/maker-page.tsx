@@ -27,7 +27,13 @@ export function loader(queryClient: QueryClient): LoaderFunction {
 export function Component() {
   const { data: maker } = useSuspenseQuery(makerPage(useSlug()));
   const notes = pageNotes([
-    { block: 'what', facts: ['place', 'founded', 'pouredFor', 'note'].map((field) => ({ key: field, provenance: provenanceOfField(maker.provenance, field) })) },
+    {
+      block: 'what',
+      facts: ['place', 'founded', 'pouredFor', 'note'].map((field) => ({
+        key: field,
+        provenance: provenanceOfField(maker.provenance, field),
+      })),
+    },
     { block: 'works', facts: maker.works.map(({ slug, provenance }) => ({ key: `works ${slug}`, provenance })) },
   ]);
   return (
@@ -50,12 +56,17 @@ export function Component() {
             <FactList facts={factsOf(maker, notes.numbersOf)} />
             <p className="no-print mt-5 flex flex-wrap items-center gap-3">
               {maker.ciphers > 0 && (
-                <ButtonLink weight="primary" to={paths.decode(`?${writeDecodeState({ ...NOTHING_SAID, maker: maker.slug }).toString()}`)}>
+                <ButtonLink
+                  weight="primary"
+                  to={paths.decode(`?${writeDecodeState({ ...NOTHING_SAID, maker: maker.slug }).toString()}`)}
+                >
                   Decode a mark of this maker
                 </ButtonLink>
               )}
               {maker.castings > 0 && (
-                <ButtonLink to={paths.castings(`?maker=${maker.slug}`)}>{maker.castings === 1 ? 'Its one casting' : `Its ${maker.castings} castings`}</ButtonLink>
+                <ButtonLink to={paths.castings(`?maker=${maker.slug}`)}>
+                  {maker.castings === 1 ? 'Its one casting' : `Its ${maker.castings} castings`}
+                </ButtonLink>
               )}
             </p>
           </Block>
@@ -66,7 +77,12 @@ export function Component() {
                 rows={maker.modelList}
                 rowKey={({ slug }) => slug}
                 columns={[
-                  { key: 'name', header: 'Model', rowHeader: true, cell: ({ slug, name }) => <Link to={paths.model(slug)}>{name}</Link> },
+                  {
+                    key: 'name',
+                    header: 'Model',
+                    rowHeader: true,
+                    cell: ({ slug, name }) => <Link to={paths.model(slug)}>{name}</Link>,
+                  },
                   { key: 'kind', header: 'kind', cell: ({ kindOfMachine }) => sayMachineKind(kindOfMachine) },
                   { key: 'made', header: 'made', cell: ({ made }) => sayYears(made) },
                 ]}
@@ -80,11 +96,21 @@ export function Component() {
                 rows={maker.cipherList}
                 rowKey={({ slug }) => slug}
                 columns={[
-                  { key: 'title', header: 'Cipher', rowHeader: true, cell: ({ slug, title }) => <Link to={paths.cipher(slug)}>{title}</Link> },
+                  {
+                    key: 'title',
+                    header: 'Cipher',
+                    rowHeader: true,
+                    cell: ({ slug, title }) => <Link to={paths.cipher(slug)}>{title}</Link>,
+                  },
                   {
                     key: 'foundry',
                     header: 'poured by',
-                    cell: ({ foundry }) => (foundry === null || foundry.slug === maker.slug ? 'its own foundry' : <Link to={paths.maker(foundry.slug)}>{foundry.name}</Link>),
+                    cell: ({ foundry }) =>
+                      foundry === null || foundry.slug === maker.slug ? (
+                        'its own foundry'
+                      ) : (
+                        <Link to={paths.maker(foundry.slug)}>{foundry.name}</Link>
+                      ),
                   },
                   { key: 'used', header: 'in use', cell: ({ used }) => sayYears(used) },
                 ]}
@@ -95,7 +121,11 @@ export function Component() {
             <Block heading="Works" margin={sourceMargin(notes.beside('works'))}>
               <FactList
                 names="cast"
-                facts={maker.works.map(({ slug, name, place }) => ({ name, value: place ?? 'place not on record', notes: notes.numbersOf(`works ${slug}`) }))}
+                facts={maker.works.map(({ slug, name, place }) => ({
+                  name,
+                  value: place ?? 'place not on record',
+                  notes: notes.numbersOf(`works ${slug}`),
+                }))}
               />
             </Block>
           )}

@@ -31,8 +31,8 @@ export function Component() {
       }
       aside={
         <p>
-          A maker had castings poured at its own foundry or at another’s. The foundry’s mark can stand beside the maker’s number, and each may have
-          dated in its own <Link to={paths.ciphers()}>cipher</Link>.
+          A maker had castings poured at its own foundry or at another’s. The foundry’s mark can stand beside the maker’s number,
+          and each may have dated in its own <Link to={paths.ciphers()}>cipher</Link>.
         </p>
       }
       table={(rows, stale) => <MakersTable {...{ rows, stale }} />}

@@ -20,7 +20,11 @@ export function ModelChecklist({ positions, notesOf, leadNotesOf }: Props) {
       caption="Checklist"
       rows={positions}
       rowKey={({ id }) => id}
-      empty={<p className="border-y border-rule py-4 text-slag">No position is on record yet. What goes where on this model will stand here.</p>}
+      empty={
+        <p className="border-y border-rule py-4 text-slag">
+          No position is on record yet. What goes where on this model will stand here.
+        </p>
+      }
       columns={[
         {
           key: 'position',
@@ -59,14 +63,18 @@ export function ModelChecklist({ positions, notesOf, leadNotesOf }: Props) {
   );
 }
 
+/** Folded away on a screen, where the warning itself stays in sight; written out on paper, where nothing unfolds. */
 function PositionCaution({ caution }: { readonly caution: string }) {
   return (
-    <details className="text-[15px] leading-snug font-normal">
-      <summary className="inline-flex min-h-11 cursor-pointer items-center gap-1.5 text-straw underline decoration-1 underline-offset-4">
-        <Icon name="warning" /> Caution
-      </summary>
-      <p className="pb-2">{caution} Local codes and competent persons decide.</p>
-    </details>
+    <>
+      <details className="text-[15px] leading-snug font-normal print:hidden">
+        <summary className="inline-flex min-h-11 cursor-pointer items-center gap-1.5 text-straw underline decoration-1 underline-offset-4">
+          <Icon name="warning" /> Caution
+        </summary>
+        <p className="pb-2">{caution} Local codes and competent persons decide.</p>
+      </details>
+      <span className="hidden text-[13px] leading-snug font-normal print:block">Caution: {caution}</span>
+    </>
   );
 }
 

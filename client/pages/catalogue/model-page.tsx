@@ -67,7 +67,11 @@ export function Component() {
             <SerialFinder {...{ model, serial, build }} />
           </Block>
           {model.series.map((one) => (
-            <Block key={one.id} heading={model.series.length === 1 ? 'Serials' : `Serials, ${saySeries(one)}`} margin={sourceMargin(notes.beside(one.id))}>
+            <Block
+              key={one.id}
+              heading={model.series.length === 1 ? 'Serials' : `Serials, ${saySeries(one)}`}
+              margin={sourceMargin(notes.beside(one.id))}
+            >
               <ModelSerials series={one} numbersOf={notes.numbersOf} />
             </Block>
           ))}
@@ -134,5 +138,11 @@ function withWindow(rule: SerialRule | null, build: BuildAnswer | undefined): Se
   if (rule === null || build === undefined || build.window === null) return rule;
   const span = { from: dayFrom(build.window.from), to: dayFrom(build.window.to) };
   const likely = build.likely === null ? {} : { likely: dayFrom(build.likely.day) };
-  return { ...rule, lanes: [...rule.lanes, { kind: 'window', name: `${build.serial.asStamped} built`, span, ...likely, label: saySpan(build.window) }] };
+  return {
+    ...rule,
+    lanes: [
+      ...rule.lanes,
+      { kind: 'window', name: `${build.serial.asStamped} built`, span, ...likely, label: saySpan(build.window) },
+    ],
+  };
 }

@@ -26,7 +26,10 @@ export function ModelSerials({ series, numbersOf }: { readonly series: ModelSeri
         caption={`Numbers of ${saySeries(series)}`}
         rows={serialRows(series.ranges)}
         rowKey={({ first }) => first}
-        columns={[numbersColumn(series), ...accounts.map((account, place) => accountColumn(account, accounts.length === 1 ? null : place, series, numbersOf))]}
+        columns={[
+          numbersColumn(series),
+          ...accounts.map((account, place) => accountColumn(account, accounts.length === 1 ? null : place, series, numbersOf)),
+        ]}
         empty={<p className="border-y border-rule py-4 text-slag">No range of this series is on record.</p>}
       />
       {series.anchors.length > 0 && <DatedMachines {...{ series, numbersOf }} />}
@@ -35,12 +38,20 @@ export function ModelSerials({ series, numbersOf }: { readonly series: ModelSeri
 }
 
 function numbersColumn({ prefix }: ModelSeries): Column<SerialRow> {
-  return { key: 'numbers', header: 'Numbers', rowHeader: true, cell: ({ first, last }) => <span className="font-mono text-[15px] whitespace-nowrap">{saySerials({ prefix, first, last })}</span> };
+  return {
+    key: 'numbers',
+    header: 'Numbers',
+    rowHeader: true,
+    cell: ({ first, last }) => (
+      <span className="font-mono text-[15px] whitespace-nowrap">{saySerials({ prefix, first, last })}</span>
+    ),
+  };
 }
 
 /** `place` among several accounts, counted from 0; null where there is one only. The rule calls them by the same numbers. */
 function accountColumn(account: Account, place: number | null, { prefix }: ModelSeries, numbersOf: Numbers): Column<SerialRow> {
-  const header = place === null ? account.title : `${account.title} (${account.preferred ? 'our reading' : `account ${place + 1}`})`;
+  const header =
+    place === null ? account.title : `${account.title} (${account.preferred ? 'our reading' : `account ${place + 1}`})`;
   return {
     key: account.id,
     header,
@@ -68,7 +79,17 @@ function Silence({ isGap, isFirst }: { readonly isGap: boolean; readonly isFirst
   return <span className="hidden text-slag roomy:inline">says nothing</span>;
 }
 
-function RangeCell({ range, row, prefix, notes }: { readonly range: ModelRange; readonly row: SerialRow; readonly prefix: string; readonly notes: readonly number[] }) {
+function RangeCell({
+  range,
+  row,
+  prefix,
+  notes,
+}: {
+  readonly range: ModelRange;
+  readonly row: SerialRow;
+  readonly prefix: string;
+  readonly notes: readonly number[];
+}) {
   const isWhole = range.first === row.first && range.last === row.last;
   const remarks = [
     ...(isWhole ? [] : [`of ${saySerials({ prefix, first: range.first, last: range.last })}`]),
@@ -94,7 +115,12 @@ function DatedMachines({ series, numbersOf }: { readonly series: ModelSeries; re
         rows={series.anchors}
         rowKey={({ number }) => number}
         columns={[
-          { key: 'number', header: 'Serial', rowHeader: true, cell: ({ number }) => <span className="font-mono text-[15px]">{saySerial(series.prefix, number)}</span> },
+          {
+            key: 'number',
+            header: 'Serial',
+            rowHeader: true,
+            cell: ({ number }) => <span className="font-mono text-[15px]">{saySerial(series.prefix, number)}</span>,
+          },
           {
             key: 'built',
             header: 'built',

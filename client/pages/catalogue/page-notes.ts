@@ -4,7 +4,10 @@ import type { FactSource, Provenance } from '#contract/common.ts';
 export type SourcedFact = { readonly key: string; readonly provenance: Provenance };
 
 /** One numbered note of a page: a source (null where none is on record), who entered the fact, when, in which version. */
-export type SourceNote = Pick<Provenance, 'version' | 'enteredBy' | 'enteredAt'> & { readonly number: number; readonly source: FactSource | null };
+export type SourceNote = Pick<Provenance, 'version' | 'enteredBy' | 'enteredAt'> & {
+  readonly number: number;
+  readonly source: FactSource | null;
+};
 
 export type PageNotes<Block extends string> = {
   /** The notes that stand beside a block: those its facts are the first to point to. */
@@ -17,7 +20,9 @@ export type PageNotes<Block extends string> = {
  * Numbers the sources behind a whole page, block by block from the top. A source cited at one place, entered by one member on one day,
  * has one number however many facts point to it. A fact without a source gets a note that says so.
  */
-export function pageNotes<Block extends string>(blocks: readonly { readonly block: Block; readonly facts: readonly SourcedFact[] }[]): PageNotes<Block> {
+export function pageNotes<Block extends string>(
+  blocks: readonly { readonly block: Block; readonly facts: readonly SourcedFact[] }[],
+): PageNotes<Block> {
   const known = new Map<string, SourceNote>();
   const beside = new Map<Block, SourceNote[]>();
   const numbers = new Map<string, number[]>();
@@ -26,7 +31,14 @@ export function pageNotes<Block extends string>(blocks: readonly { readonly bloc
     for (const { key, provenance } of facts) {
       const { version, enteredBy, enteredAt, sources } = provenance;
       for (const source of sources.length > 0 ? sources : [null]) {
-        const identity = JSON.stringify([source?.source.slug, source?.locator, source?.note, enteredBy, enteredAt.slice(0, 10), version]);
+        const identity = JSON.stringify([
+          source?.source.slug,
+          source?.locator,
+          source?.note,
+          enteredBy,
+          enteredAt.slice(0, 10),
+          version,
+        ]);
         const note = known.get(identity) ?? { number: known.size + 1, source, version, enteredBy, enteredAt };
         if (!known.has(identity)) own.push(note);
         known.set(identity, note);

@@ -21,7 +21,12 @@ export function loader(queryClient: QueryClient): LoaderFunction {
 
 export function Component() {
   const { data: type } = useSuspenseQuery(partTypePage(useSlug()));
-  const notes = pageNotes([{ block: 'what', facts: ['note', 'caution'].map((field) => ({ key: field, provenance: provenanceOfField(type.provenance, field) })) }]);
+  const notes = pageNotes([
+    {
+      block: 'what',
+      facts: ['note', 'caution'].map((field) => ({ key: field, provenance: provenanceOfField(type.provenance, field) })),
+    },
+  ]);
   return (
     <>
       <PageTitle title={type.name} above={<Link to={paths.partTypes()}>Part types</Link>}>
@@ -65,7 +70,10 @@ export function Component() {
                     <Link to={paths.model(slug)} className="inline-flex min-h-11 items-center">
                       {name}
                     </Link>
-                    <Link to={paths.castings(`?model=${slug}&partType=${type.slug}`)} className="inline-flex min-h-11 items-center text-[15px]">
+                    <Link
+                      to={paths.castings(`?model=${slug}&partType=${type.slug}`)}
+                      className="inline-flex min-h-11 items-center text-[15px]"
+                    >
                       Castings for it<span className="sr-only"> on {name}</span>
                     </Link>
                   </li>

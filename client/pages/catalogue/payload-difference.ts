@@ -6,7 +6,12 @@ type JsonObject = { readonly [name: string]: Json };
 export type Payload = JsonObject;
 
 /** One thing that two versions say differently; null where a version says nothing of it. */
-export type FieldChange = { readonly path: string; readonly field: string; readonly before: string | null; readonly after: string | null };
+export type FieldChange = {
+  readonly path: string;
+  readonly field: string;
+  readonly before: string | null;
+  readonly after: string | null;
+};
 
 /** What changed from one version's payload to the next, field by field, down to the single value. */
 export function payloadDifference(before: Payload, after: Payload): FieldChange[] {
@@ -15,7 +20,9 @@ export function payloadDifference(before: Payload, after: Payload): FieldChange[
 
 /** All that a payload says, field by field; what it says nothing of is left out, and so are the register's own numbers for other entries. */
 export function payloadLines(payload: Payload): { readonly path: string; readonly field: string; readonly value: string }[] {
-  return difference({}, payload, []).flatMap(({ path, field, after }) => (after === null || after.startsWith(ENTRY) ? [] : [{ path, field, value: after }]));
+  return difference({}, payload, []).flatMap(({ path, field, after }) =>
+    after === null || after.startsWith(ENTRY) ? [] : [{ path, field, value: after }],
+  );
 }
 
 function difference(before: Json | undefined, after: Json | undefined, path: readonly string[]): FieldChange[] {
@@ -27,9 +34,17 @@ function difference(before: Json | undefined, after: Json | undefined, path: rea
 }
 
 /** The parts of two values that can be told apart by name or place; null where they are compared as wholes. */
-function sharedEntries(before: Json | undefined, after: Json | undefined, isTop: boolean): [name: string, was: Json | undefined, is: Json | undefined][] | null {
+function sharedEntries(
+  before: Json | undefined,
+  after: Json | undefined,
+  isTop: boolean,
+): [name: string, was: Json | undefined, is: Json | undefined][] | null {
   if (isList(before) && isList(after) && [...before, ...after].some(isObject)) {
-    return Array.from({ length: Math.max(before.length, after.length) }, (_, place) => [String(place + 1), before[place], after[place]]);
+    return Array.from({ length: Math.max(before.length, after.length) }, (_, place) => [
+      String(place + 1),
+      before[place],
+      after[place],
+    ]);
   }
   if (!isObject(before) || !isObject(after)) return null;
   if (!isTop && (isRange(before) || isRange(after))) return null;
@@ -62,7 +77,8 @@ function sayValue(value: Json | undefined): string | null {
   if (typeof value === 'boolean') return value ? 'yes' : 'no';
   if (typeof value === 'number') return String(value);
   if (typeof value === 'string') return sayText(value);
-  if (isList(value)) return value.length === 0 ? null : value.map((one) => sayValue(one) ?? 'nothing').join(isPlain(value) ? ', ' : '; ');
+  if (isList(value))
+    return value.length === 0 ? null : value.map((one) => sayValue(one) ?? 'nothing').join(isPlain(value) ? ', ' : '; ');
   if (isRange(value)) return sayRange(value);
   return sayObject(value);
 }
@@ -79,7 +95,10 @@ function sayObject(value: JsonObject): string | null {
     return text === null ? [] : [{ name, text }];
   });
   const [only] = said;
-  const rest = said.length === 1 && only !== undefined && lead !== null ? only.text : said.map(({ name, text }) => `${sayFieldName(name)} ${text}`).join(', ');
+  const rest =
+    said.length === 1 && only !== undefined && lead !== null
+      ? only.text
+      : said.map(({ name, text }) => `${sayFieldName(name)} ${text}`).join(', ');
   if (lead === null) return rest === '' ? null : rest;
   return rest === '' ? lead : `${lead}: ${rest}`;
 }
@@ -94,7 +113,8 @@ type Range = { readonly from: string | number | null; readonly to: string | numb
 /** Days as people say them, numbers as first–last. */
 function sayRange({ from, to }: Range): string {
   const ends = [from, to].filter((end) => end !== null);
-  if (ends.every((end) => typeof end === 'string' && parseDay(end).ok)) return sayOpenSpan({ from: from === null ? null : String(from), to: to === null ? null : String(to) });
+  if (ends.every((end) => typeof end === 'string' && parseDay(end).ok))
+    return sayOpenSpan({ from: from === null ? null : String(from), to: to === null ? null : String(to) });
   if (from === null) return `up to ${String(to)}`;
   return to === null ? `${String(from)} on` : `${String(from)}–${String(to)}`;
 }

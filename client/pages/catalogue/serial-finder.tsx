@@ -45,7 +45,11 @@ export function SerialFinder({ model, serial, build }: Props) {
   const example = model.series[0]?.ranges[0];
   return (
     <>
-      <form onSubmit={submit} className="no-print grid gap-x-4 roomy:grid-cols-[minmax(0,20rem)_max-content] roomy:items-start" noValidate>
+      <form
+        onSubmit={submit}
+        className="no-print grid gap-x-4 roomy:grid-cols-[minmax(0,20rem)_max-content] roomy:items-start"
+        noValidate
+      >
         <TextField
           key={serial}
           id={field}
@@ -58,7 +62,11 @@ export function SerialFinder({ model, serial, build }: Props) {
           spellCheck={false}
           mono
           error={fault}
-          hint={example === undefined ? undefined : `Such as ${saySerials({ prefix: example.series.prefix, first: example.first, last: example.first })}`}
+          hint={
+            example === undefined
+              ? undefined
+              : `Such as ${saySerials({ prefix: example.series.prefix, first: example.first, last: example.first })}`
+          }
         />
         <Button type="submit" weight="primary" className="mb-2 roomy:mt-[30px]">
           Find when it was built
@@ -87,7 +95,9 @@ function BuildResult({ model, build: { data, error, refetch } }: Pick<Props, 'mo
         <p className="text-[26px] leading-tight font-semibold">
           {saySpan(data.window)}
           {data.likely !== null && data.window.from !== data.window.to && (
-            <span className="mt-1 block text-[17px] font-normal">Most likely about {sayDay(data.likely.day)}, if the shop kept an even pace.</span>
+            <span className="mt-1 block text-[17px] font-normal">
+              Most likely about {sayDay(data.likely.day)}, if the shop kept an even pace.
+            </span>
           )}
         </p>
       )}
@@ -99,7 +109,8 @@ function BuildResult({ model, build: { data, error, refetch } }: Pick<Props, 'mo
           {data.readsAlike.map(({ model: other, window }, place) => (
             <span key={other.slug}>
               {place > 0 && ', '}
-              <Link to={`${paths.model(other.slug)}?serial=${encodeURIComponent(data.serial.asStamped)}`}>{other.name}</Link> ({saySpan(window)})
+              <Link to={`${paths.model(other.slug)}?serial=${encodeURIComponent(data.serial.asStamped)}`}>{other.name}</Link> (
+              {saySpan(window)})
             </span>
           ))}
           . Make sure of the model.
@@ -107,7 +118,11 @@ function BuildResult({ model, build: { data, error, refetch } }: Pick<Props, 'mo
       )}
       {data.window !== null && (
         <p className="no-print mt-4">
-          <ButtonLink to={paths.decode(`?${writeDecodeState({ ...NOTHING_SAID, maker: model.maker.slug, model: model.slug, serial: data.serial.asStamped }).toString()}`)}>
+          <ButtonLink
+            to={paths.decode(
+              `?${writeDecodeState({ ...NOTHING_SAID, maker: model.maker.slug, model: model.slug, serial: data.serial.asStamped }).toString()}`,
+            )}
+          >
             Hold a mark against it
           </ButtonLink>
         </p>
@@ -122,7 +137,8 @@ function sayHolding({ accounts, range, window, serial: { prefix } }: BuildAnswer
   if (range === null || own === undefined) return null;
   const numbers = saySerials({ prefix, first: range.first, last: range.last });
   const isNarrowed = window !== null && (window.from !== range.dates.from || window.to !== range.dates.to);
-  return `By ${own.account.title}: ${numbers}, ${range.meaning === 'built' ? 'built ' : ''}${sayRangeDates(range)}.${isNarrowed ? ' Dated machines on either side narrow it.' : ''}`;
+  const dates = range.meaning === 'built' ? `built ${sayRangeDates(range)}` : sayRangeDates(range);
+  return `By ${own.account.title}: ${numbers}, ${dates}.${isNarrowed ? ' Dated machines on either side narrow it.' : ''}`;
 }
 
 /** What accounts other than the register's reading say of the same number. */

@@ -10,7 +10,10 @@ import { slugOf, useSlug } from './slug-param.ts';
 export function loader(queryClient: QueryClient): LoaderFunction {
   return async ({ params }) => {
     const slug = slugOf(params);
-    await Promise.all([queryClient.query({ ...serialRangePage(slug), staleTime: 'static' }), queryClient.query({ ...serialRangeHistory(slug), staleTime: 'static' })]);
+    await Promise.all([
+      queryClient.query({ ...serialRangePage(slug), staleTime: 'static' }),
+      queryClient.query({ ...serialRangeHistory(slug), staleTime: 'static' }),
+    ]);
     return null;
   };
 }
@@ -19,5 +22,11 @@ export function Component() {
   const slug = useSlug();
   const { data: range } = useSuspenseQuery(serialRangePage(slug));
   const { data: history } = useSuspenseQuery(serialRangeHistory(slug));
-  return <HistoryView name={saySerials({ prefix: range.series.prefix, first: range.first, last: range.last })} path={paths.serialRange(slug)} versions={history.items} />;
+  return (
+    <HistoryView
+      name={saySerials({ prefix: range.series.prefix, first: range.first, last: range.last })}
+      path={paths.serialRange(slug)}
+      versions={history.items}
+    />
+  );
 }

@@ -26,14 +26,23 @@ export function loader(queryClient: QueryClient): LoaderFunction {
 export function Component() {
   const { data: range } = useSuspenseQuery(serialRangePage(useSlug()));
   const numbers = saySerials({ prefix: range.series.prefix, first: range.first, last: range.last });
-  const notes = pageNotes([{ block: 'what', facts: ['numbers', 'built', 'note'].map((field) => ({ key: field, provenance: provenanceOfField(range.provenance, field) })) }]);
+  const notes = pageNotes([
+    {
+      block: 'what',
+      facts: ['numbers', 'built', 'note'].map((field) => ({
+        key: field,
+        provenance: provenanceOfField(range.provenance, field),
+      })),
+    },
+  ]);
   return (
     <>
       <PageTitle
         title={`${numbers}, ${range.model.name}`}
         above={
           <>
-            <Link to={paths.maker(range.maker.slug)}>{range.maker.name}</Link> · <Link to={paths.model(range.model.slug)}>{range.model.name}</Link>
+            <Link to={paths.maker(range.maker.slug)}>{range.maker.name}</Link> ·{' '}
+            <Link to={paths.model(range.model.slug)}>{range.model.name}</Link>
           </>
         }
         below={`By ${range.account.title}${range.preferred ? ', the account the register goes by' : ''}`}
@@ -54,7 +63,8 @@ export function Component() {
           >
             <FactList facts={factsOf(range, notes.numbersOf)} />
             <p className="mt-4 max-w-measure">
-              The whole series, with what other accounts say of the same numbers, stands with the <Link to={paths.model(range.model.slug)}>{range.model.name}</Link>.
+              The whole series, with what other accounts say of the same numbers, stands with the{' '}
+              <Link to={paths.model(range.model.slug)}>{range.model.name}</Link>.
             </p>
           </Block>
         </PageGrid>
@@ -66,12 +76,23 @@ export function Component() {
 function factsOf(range: SerialRangePage, numbersOf: (key: string) => readonly number[]): Fact[] {
   const { series, first, last, dates, meaning, precision, standing, inOrder, note } = range;
   return [
-    { name: 'Numbers', value: <span className="font-mono">{saySerials({ prefix: series.prefix, first, last })}</span>, notes: numbersOf('numbers') },
+    {
+      name: 'Numbers',
+      value: <span className="font-mono">{saySerials({ prefix: series.prefix, first, last })}</span>,
+      notes: numbersOf('numbers'),
+    },
     ...(last === null ? [{ name: 'Last number', value: 'not known' }] : []),
-    { name: capital(sayMeaning(meaning)), value: `${saySpan(dates)}, given ${sayPrecision(precision)}`, notes: numbersOf('built') },
+    {
+      name: capital(sayMeaning(meaning)),
+      value: `${saySpan(dates)}, given ${sayPrecision(precision)}`,
+      notes: numbersOf('built'),
+    },
     ...(meaning === 'built' ? [] : [{ name: 'Not', value: 'days of building, so they give no build window' }]),
     { name: 'Standing', value: capital(sayRangeStanding(standing)) },
-    { name: 'Issued', value: inOrder ? 'in order, so a number has a likeliest day' : 'order not known, so no day in it is likelier than another' },
+    {
+      name: 'Issued',
+      value: inOrder ? 'in order, so a number has a likeliest day' : 'order not known, so no day in it is likelier than another',
+    },
     ...(series.works === null ? [] : [{ name: 'Works', value: series.works }]),
     ...(series.label === null ? [] : [{ name: 'Run', value: series.label }]),
     ...(note === null ? [] : [{ name: 'Note', value: note, notes: numbersOf('note') }]),

@@ -28,8 +28,20 @@ export function Component() {
       filters={
         <>
           <TextFilter label="Prefix or words" value={query.q ?? ''} onChange={(q) => change({ q })} />
-          <ChoiceFilter label="Maker" value={query.maker} choices={makers} all="Any maker" onChange={(maker) => change({ maker, model: null })} />
-          <ChoiceFilter label="Model" value={query.model} choices={models} all="Any model" onChange={(model) => change({ model })} />
+          <ChoiceFilter
+            label="Maker"
+            value={query.maker}
+            choices={makers}
+            all="Any maker"
+            onChange={(maker) => change({ maker, model: null })}
+          />
+          <ChoiceFilter
+            label="Model"
+            value={query.model}
+            choices={models}
+            all="Any model"
+            onChange={(model) => change({ model })}
+          />
           <OrderFilter value={query.sort} orders={ORDERS} onChange={(sort) => change({ sort })} />
         </>
       }

@@ -9,7 +9,10 @@ import { slugOf, useSlug } from './slug-param.ts';
 export function loader(queryClient: QueryClient): LoaderFunction {
   return async ({ params }) => {
     const slug = slugOf(params);
-    await Promise.all([queryClient.query({ ...sourcePage(slug), staleTime: 'static' }), queryClient.query({ ...sourceHistory(slug), staleTime: 'static' })]);
+    await Promise.all([
+      queryClient.query({ ...sourcePage(slug), staleTime: 'static' }),
+      queryClient.query({ ...sourceHistory(slug), staleTime: 'static' }),
+    ]);
     return null;
   };
 }

@@ -7,7 +7,10 @@ import { SourceLine } from '../../ui/provenance-notes.tsx';
 import { bySource } from './page-notes.ts';
 import type { SourceNote } from './page-notes.ts';
 
-/** The sources beside a block, each with who entered the fact and when. A source that many facts rest on is named once, with a line for each place in it. */
+/**
+ * The sources beside a block, each with who entered the fact and when. A source that many facts rest on is named once, with a line
+ * for each place in it.
+ */
 export function SourceNotes({ notes }: { readonly notes: readonly SourceNote[] }) {
   return bySource(notes).map((group) => {
     const [first] = group;
@@ -17,7 +20,9 @@ export function SourceNotes({ notes }: { readonly notes: readonly SourceNote[] }
       <MarginNotes key={number} notes={[{ number, body: <SourceLine source={source} />, fine: sayEntered(first) }]} />
     ) : (
       <section key={number} className="text-[14px] leading-[1.45] text-slag">
-        <p className="font-semibold">{source === null ? 'No source on record' : <Link to={paths.source(source.source.slug)}>{source.source.title}</Link>}</p>
+        <p className="font-semibold">
+          {source === null ? 'No source on record' : <Link to={paths.source(source.source.slug)}>{source.source.title}</Link>}
+        </p>
         <MarginNotes notes={group.map((note) => ({ number: note.number, body: <PlaceLine note={note} /> }))} />
       </section>
     );

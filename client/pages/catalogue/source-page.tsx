@@ -19,7 +19,10 @@ import { VersionLinks } from './version-links.tsx';
 export function loader(queryClient: QueryClient): LoaderFunction {
   return async ({ params }) => {
     const slug = slugOf(params);
-    await Promise.all([queryClient.query({ ...sourcePage(slug), staleTime: 'static' }), queryClient.query({ ...sourceHistory(slug), staleTime: 'static' })]);
+    await Promise.all([
+      queryClient.query({ ...sourcePage(slug), staleTime: 'static' }),
+      queryClient.query({ ...sourceHistory(slug), staleTime: 'static' }),
+    ]);
     return null;
   };
 }
@@ -31,7 +34,11 @@ export function Component() {
   const inForce = history.items.find((version) => version.inForce);
   return (
     <>
-      <PageTitle title={source.title} above={<Link to={paths.sources()}>Sources</Link>} below={capital(saySourceKind(source.kind))}>
+      <PageTitle
+        title={source.title}
+        above={<Link to={paths.sources()}>Sources</Link>}
+        below={capital(saySourceKind(source.kind))}
+      >
         {source.title}
       </PageTitle>
       <PartingLine />
@@ -39,8 +46,14 @@ export function Component() {
         <PageGrid>
           <Block
             heading="What it is"
-            notes={inForce === undefined ? [] : [{ number: null, body: '', fine: `Entered by ${inForce.enteredBy}, ${sayMoment(inForce.enteredAt)}.` }]}
-            {...(inForce === undefined ? {} : { margin: <VersionLinks version={inForce.version} history={paths.sourceHistory(slug)} /> })}
+            notes={
+              inForce === undefined
+                ? []
+                : [{ number: null, body: '', fine: `Entered by ${inForce.enteredBy}, ${sayMoment(inForce.enteredAt)}.` }]
+            }
+            {...(inForce === undefined
+              ? {}
+              : { margin: <VersionLinks version={inForce.version} history={paths.sourceHistory(slug)} /> })}
           >
             <FactList
               facts={[
@@ -50,17 +63,24 @@ export function Component() {
               ]}
             />
           </Block>
-          {source.behind.length === 0 && <EmptyState title="No fact rests on it yet">Facts that name this source will be listed here.</EmptyState>}
+          {source.behind.length === 0 && (
+            <EmptyState title="No fact rests on it yet">Facts that name this source will be listed here.</EmptyState>
+          )}
           {groupFacts(source.behind).map(({ kind, facts }) => (
             <Block key={kind} heading={sayFactKind(kind, facts.length)}>
               <ul>
                 {facts.map((fact, place) => {
                   const path = pathOfFact(fact);
                   return (
-                    <li key={`${fact.slug ?? ''} ${place}`} className="grid gap-x-6 border-b border-rule py-2 roomy:grid-cols-[minmax(0,1fr)_minmax(0,15rem)]">
+                    <li
+                      key={`${fact.slug ?? ''} ${place}`}
+                      className="grid gap-x-6 border-b border-rule py-2 roomy:grid-cols-[minmax(0,1fr)_minmax(0,15rem)]"
+                    >
                       <span>{path === null ? fact.title : <Link to={path}>{fact.title}</Link>}</span>
                       <span className="text-[15px] text-slag">
-                        {[fact.field === null ? null : sayFieldName(fact.field), fact.locator].filter((part) => part !== null).join(', ')}
+                        {[fact.field === null ? null : sayFieldName(fact.field), fact.locator]
+                          .filter((part) => part !== null)
+                          .join(', ')}
                       </span>
                     </li>
                   );

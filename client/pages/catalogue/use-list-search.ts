@@ -22,7 +22,9 @@ export function useListSearch<Schema extends z.ZodObject>(schema: Schema): ListS
     params,
     narrowed: isNarrowed(read.query) || Object.keys(read.refused).length > 0,
     change: (change) => {
-      const typingOn = Object.entries(change).every(([name, value]) => ['q', 'number'].includes(name) && params.has(name) && value !== null && value !== '');
+      const typingOn = Object.entries(change).every(
+        ([name, value]) => ['q', 'number'].includes(name) && params.has(name) && value !== null && value !== '',
+      );
       setParams((now) => changeSearch(now, change), { preventScrollReset: true, replace: typingOn });
     },
   };

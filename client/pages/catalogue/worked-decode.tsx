@@ -51,18 +51,38 @@ export function WorkedDecode({ cipher }: { readonly cipher: CipherPage }) {
         max={last}
         onChange={(event) => choose(event.target.value)}
         error={asked !== null && !isAsked ? `It was in use from ${formatDay(life.from)} to ${formatDay(life.to)}` : null}
-        hint={isAsked ? <Link to="?" preventScrollReset>Back to today’s choice</Link> : 'Today’s choice; take any other'}
+        hint={
+          isAsked ? (
+            <Link to="?" preventScrollReset>
+              Back to today’s choice
+            </Link>
+          ) : (
+            'Today’s choice; take any other'
+          )
+        }
       />
       {worked !== null && <Worked {...{ cipher, worked }} />}
     </>
   );
 }
 
-function Worked({ cipher, worked: { day, marks, reading, decoding } }: { readonly cipher: CipherPage; readonly worked: WorkedDay }) {
+function Worked({
+  cipher,
+  worked: { day, marks, reading, decoding },
+}: {
+  readonly cipher: CipherPage;
+  readonly worked: WorkedDay;
+}) {
   if (reading === null || decoding === null) return <p className="mt-3">The cipher has no symbols for {formatDay(day)}.</p>;
   const [mark = '', ...others] = marks;
-  const candidates = decoding.candidates.map((candidate) => ({ ...candidate, from: writeDay(candidate.from), to: writeDay(candidate.to), spans: [...candidate.spans] }));
-  const sayBack = `${formatDay(day)} is cast ${mark}. ${decoding.total === 1 ? 'It reads back as one date.' : `It reads back as ${decoding.total} dates.`}`;
+  const candidates = decoding.candidates.map((candidate) => ({
+    ...candidate,
+    from: writeDay(candidate.from),
+    to: writeDay(candidate.to),
+    spans: [...candidate.spans],
+  }));
+  const dates = decoding.total === 1 ? 'one date' : `${decoding.total} dates`;
+  const sayBack = `${formatDay(day)} is cast ${mark}. It reads back as ${dates}.`;
   return (
     <div className="mt-2 space-y-4">
       <Live>{sayBack}</Live>
@@ -85,7 +105,9 @@ function Worked({ cipher, worked: { day, marks, reading, decoding } }: { readonl
       )}
       <p className="no-print">
         <Link
-          to={paths.decode(`?${writeDecodeState({ ...NOTHING_SAID, maker: cipher.maker.slug, cipher: cipher.slug, mark }).toString()}`)}
+          to={paths.decode(
+            `?${writeDecodeState({ ...NOTHING_SAID, maker: cipher.maker.slug, cipher: cipher.slug, mark }).toString()}`,
+          )}
           className="inline-flex min-h-11 items-center"
         >
           Take this mark to the decoder
@@ -96,7 +118,15 @@ function Worked({ cipher, worked: { day, marks, reading, decoding } }: { readonl
 }
 
 /** What a reader finds who has only the mark; the day it was cast is told from the others. */
-function ReadBack({ day, candidates, total }: { readonly day: Day; readonly candidates: readonly Candidate[]; readonly total: number }) {
+function ReadBack({
+  day,
+  candidates,
+  total,
+}: {
+  readonly day: Day;
+  readonly candidates: readonly Candidate[];
+  readonly total: number;
+}) {
   const [only] = candidates;
   if (total === 1 && only !== undefined) {
     return (
@@ -107,10 +137,16 @@ function ReadBack({ day, candidates, total }: { readonly day: Day; readonly cand
   }
   return (
     <div>
-      <p>but who has only the mark can’t tell it from the {total === 2 ? 'other date' : `${sayCount(total - 1)} other dates`} it can mean:</p>
+      <p>
+        but who has only the mark can’t tell it from the {total === 2 ? 'other date' : `${sayCount(total - 1)} other dates`} it
+        can mean:
+      </p>
       <ul className="mt-1">
         {candidates.slice(0, DATES_SHOWN).map((candidate) => (
-          <li key={`${candidate.from} ${candidate.to}`} className="flex flex-wrap items-baseline gap-x-4 border-b border-rule py-1.5">
+          <li
+            key={`${candidate.from} ${candidate.to}`}
+            className="flex flex-wrap items-baseline gap-x-4 border-b border-rule py-1.5"
+          >
             <span className="min-w-48 font-semibold">{formatSpan(candidate)}</span>
             <span className="min-w-10 text-slag">{sayShare(candidate.share)}</span>
             {includesDay(candidate, day) && (

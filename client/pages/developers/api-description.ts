@@ -6,9 +6,14 @@ import { call } from '../../lib/call.ts';
 const Operation = z.object({
   operationId: z.string(),
   summary: z.string(),
-  parameters: z.array(z.object({ name: z.string(), in: z.enum(['path', 'query']), required: z.boolean(), schema: z.json() })).default([]),
+  parameters: z
+    .array(z.object({ name: z.string(), in: z.enum(['path', 'query']), required: z.boolean(), schema: z.json() }))
+    .default([]),
   requestBody: z.object({ content: z.record(z.string(), z.object({ schema: z.json() })) }).optional(),
-  responses: z.record(z.string(), z.object({ $ref: z.string().optional(), content: z.record(z.string(), z.object({ schema: z.json() })).optional() })),
+  responses: z.record(
+    z.string(),
+    z.object({ $ref: z.string().optional(), content: z.record(z.string(), z.object({ schema: z.json() })).optional() }),
+  ),
 });
 
 /** As much of an OpenAPI 3.1 document as this page shows. */
@@ -19,10 +24,19 @@ export const ApiDescription = z.object({
 });
 export type ApiDescription = z.infer<typeof ApiDescription>;
 
-const readApiDescription = endpoint({ method: 'GET', path: '/openapi.json', summary: 'This interface, as OpenAPI 3.1', answer: ApiDescription });
+const readApiDescription = endpoint({
+  method: 'GET',
+  path: '/openapi.json',
+  summary: 'This interface, as OpenAPI 3.1',
+  answer: ApiDescription,
+});
 
 export const apiDescription = () =>
-  queryOptions({ queryKey: ['api description'], queryFn: ({ signal }) => call(readApiDescription, { signal }), staleTime: Infinity });
+  queryOptions({
+    queryKey: ['api description'],
+    queryFn: ({ signal }) => call(readApiDescription, { signal }),
+    staleTime: Infinity,
+  });
 
 /** A JSON Schema, as parsed. */
 export type JsonSchema = z.infer<ReturnType<typeof z.json>>;

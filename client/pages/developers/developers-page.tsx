@@ -23,7 +23,10 @@ const NOTATION_ROWS = [
   { written: '?', means: 'one glyph that can’t be read' },
   { written: '[OD]', means: 'one of these, equally likely; no ranges' },
   { written: '*', means: 'any number of glyphs broken or ground away, none included; once at most' },
-  { written: Array.from(BREAK_CHARACTERS, (one) => (one === ' ' ? 'space' : one)).join('  '), means: 'a gap: a field of the date must end here' },
+  {
+    written: Array.from(BREAK_CHARACTERS, (one) => (one === ' ' ? 'space' : one)).join('  '),
+    means: 'a gap: a field of the date must end here',
+  },
 ] as const;
 
 export function Component() {
@@ -51,14 +54,18 @@ export function Component() {
               <li>
                 JSON below <code className="font-mono">/api</code>. Public reads need no account.
               </li>
-              <li>Days are ISO 8601 text, and both ends of a span are included. Null stands for an end not known or still open.</li>
+              <li>
+                Days are ISO 8601 text, and both ends of a span are included. Null stands for an end not known or still open.
+              </li>
               <li>Serials and the bounds of ranges travel as text: they can be larger than a JSON number carries.</li>
               <li>
-                A list gives <code className="font-mono">items</code> and <code className="font-mono">next</code>: send <code className="font-mono">next</code> back as{' '}
-                <code className="font-mono">after</code>. On the first page <code className="font-mono">total</code> counts them all.
+                A list gives <code className="font-mono">items</code> and <code className="font-mono">next</code>: send{' '}
+                <code className="font-mono">next</code> back as <code className="font-mono">after</code>. On the first page{' '}
+                <code className="font-mono">total</code> counts them all.
               </li>
               <li>
-                Every fact brings its <code className="font-mono">provenance</code>: version, who entered it, when, and its sources.
+                Every fact brings its <code className="font-mono">provenance</code>: version, who entered it, when, and its
+                sources.
               </li>
             </ul>
           </Block>
@@ -68,7 +75,12 @@ export function Component() {
               rows={NOTATION_ROWS}
               rowKey={({ written }) => written}
               columns={[
-                { key: 'written', header: 'Written', rowHeader: true, cell: ({ written }) => <code className="font-mono">{written}</code> },
+                {
+                  key: 'written',
+                  header: 'Written',
+                  rowHeader: true,
+                  cell: ({ written }) => <code className="font-mono">{written}</code>,
+                },
                 { key: 'means', header: 'means', bare: true, cell: ({ means }) => means },
               ]}
             />
@@ -82,9 +94,11 @@ export function Component() {
               {areas.map((area) => (
                 <section key={area} aria-label={area}>
                   <h3 className="font-mono font-bold">{area}</h3>
-                  {operations.filter((operation) => areaOf(operation) === area).map((operation) => (
-                    <Operation key={operation.id} operation={operation} />
-                  ))}
+                  {operations
+                    .filter((operation) => areaOf(operation) === area)
+                    .map((operation) => (
+                      <Operation key={operation.id} operation={operation} />
+                    ))}
                 </section>
               ))}
             </div>
@@ -105,12 +119,14 @@ export function Component() {
             heading="When something is wrong"
             margin={
               <p className="text-[15px] leading-snug text-slag">
-                Problems follow RFC 9457. <code className="font-mono">requestId</code> stands in our log too: quote it when you write to us.
+                Problems follow RFC 9457. <code className="font-mono">requestId</code> stands in our log too: quote it when you
+                write to us.
               </p>
             }
           >
             <p className="mb-3 max-w-measure">
-              The answer is <code className="font-mono">application/problem+json</code>. Its <code className="font-mono">type</code> is one of the addresses below, and where values are wrong,{' '}
+              The answer is <code className="font-mono">application/problem+json</code>. Its{' '}
+              <code className="font-mono">type</code> is one of the addresses below, and where values are wrong,{' '}
               <code className="font-mono">errors</code> names each with its path.
             </p>
             <DataTable
@@ -118,7 +134,16 @@ export function Component() {
               rows={PROBLEM_KINDS}
               rowKey={(kind) => kind}
               columns={[
-                { key: 'kind', header: 'Kind', rowHeader: true, cell: (kind) => <Link to={problemType(kind)} className="font-mono">{kind}</Link> },
+                {
+                  key: 'kind',
+                  header: 'Kind',
+                  rowHeader: true,
+                  cell: (kind) => (
+                    <Link to={problemType(kind)} className="font-mono">
+                      {kind}
+                    </Link>
+                  ),
+                },
                 { key: 'status', header: 'status', cell: (kind) => PROBLEMS[kind].status },
                 { key: 'title', header: 'title', cell: (kind) => PROBLEMS[kind].title },
               ]}

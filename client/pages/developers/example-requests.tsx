@@ -18,7 +18,9 @@ const DECODE: z.input<typeof DecodeRequest> = {
       { field: 'day', symbols: 'key', width: [1, 2] },
       { field: 'year', symbols: 'key', width: 2 },
     ],
-    symbolSets: { key: { kind: 'digits', symbols: { B: '1', L: '2', O: '3', C: '4', K: '5', P: '6', R: '7', I: '8', N: '9', T: '0' } } },
+    symbolSets: {
+      key: { kind: 'digits', symbols: { B: '1', L: '2', O: '3', C: '4', K: '5', P: '6', R: '7', I: '8', N: '9', T: '0' } },
+    },
     usedFrom: '1928-01-01',
     usedTo: '1954-12-31',
   },
@@ -39,27 +41,46 @@ export function ExampleRequests() {
   const [range] = useQuery(serialRangesList({ limit: 1 })).data?.items ?? [];
   return (
     <div className="space-y-8">
-      <Example heading="Every date a mark can mean" request={`POST ${addressOf(decodeMark.path, {}, {})}`} body={DECODE} send={() => call(decodeMark, { body: DECODE })} />
+      <Example
+        heading="Every date a mark can mean"
+        request={`POST ${addressOf(decodeMark.path, {}, {})}`}
+        body={DECODE}
+        send={() => call(decodeMark, { body: DECODE })}
+      />
       {range !== undefined && (
         <Example
           heading="When a serial was built"
           request={`GET ${addressOf(readBuild.path, { slug: range.model.slug }, { serial: range.series.prefix + range.first })}`}
-          send={() => call(readBuild, { params: { slug: range.model.slug }, query: { serial: range.series.prefix + range.first } })}
+          send={() =>
+            call(readBuild, { params: { slug: range.model.slug }, query: { serial: range.series.prefix + range.first } })
+          }
         />
       )}
-      <Example heading="Whether the one fits the other" request={`POST ${addressOf(judgeFitOfPart.path, {}, {})}`} body={FIT} send={() => call(judgeFitOfPart, { body: FIT })} />
+      <Example
+        heading="Whether the one fits the other"
+        request={`POST ${addressOf(judgeFitOfPart.path, {}, {})}`}
+        body={FIT}
+        send={() => call(judgeFitOfPart, { body: FIT })}
+      />
     </div>
   );
 }
 
-type ExampleProps = { readonly heading: string; readonly request: string; readonly body?: unknown; readonly send: () => Promise<unknown> };
+type ExampleProps = {
+  readonly heading: string;
+  readonly request: string;
+  readonly body?: unknown;
+  readonly send: () => Promise<unknown>;
+};
 
 function Example({ heading, request, body, send }: ExampleProps) {
   const { data, error, isPending, isIdle, mutate } = useMutation({ mutationFn: send });
   return (
     <section aria-label={heading}>
       <h3 className="mb-2 font-semibold">{heading}</h3>
-      <Code label={`Request: ${heading}`}>{body === undefined ? request : `${request}\nContent-Type: application/json\n\n${writeJson(body)}`}</Code>
+      <Code label={`Request: ${heading}`}>
+        {body === undefined ? request : `${request}\nContent-Type: application/json\n\n${writeJson(body)}`}
+      </Code>
       <Button className="mt-3" onClick={() => mutate()} aria-disabled={isPending && !isIdle}>
         Send it
       </Button>
@@ -77,7 +98,7 @@ function Example({ heading, request, body, send }: ExampleProps) {
 }
 
 /** Text as it travels; scrolls inside its own frame, by keyboard too. */
-export function Code({ label, children }: { readonly label: string; readonly children: string }) {
+function Code({ label, children }: { readonly label: string; readonly children: string }) {
   return (
     <pre
       role="region"

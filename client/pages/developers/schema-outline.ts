@@ -27,8 +27,10 @@ function partsOf(schema: JsonObject, depth: number): OutlineLine[] {
     const required = isList(schema['required']) ? schema['required'] : [];
     return Object.entries(properties).flatMap(([name, part]) => outlineSchema(part, name, depth, !required.includes(name)));
   }
-  if (isObject(additionalProperties) && needsUnfolding(additionalProperties)) return outlineSchema(additionalProperties, 'each', depth);
-  if (isList(prefixItems)) return prefixItems.filter(needsUnfolding).flatMap((part, place) => outlineSchema(part, `${place + 1}`, depth));
+  if (isObject(additionalProperties) && needsUnfolding(additionalProperties))
+    return outlineSchema(additionalProperties, 'each', depth);
+  if (isList(prefixItems))
+    return prefixItems.filter(needsUnfolding).flatMap((part, place) => outlineSchema(part, `${place + 1}`, depth));
   const ways = isList(anyOf) ? anyOf : isList(oneOf) ? oneOf : [];
   const unfolded = ways.filter(needsUnfolding);
   const [only] = unfolded;
@@ -61,7 +63,9 @@ export function sayType(schema: Json | undefined): string {
     case 'array':
       return sayList(schema);
     case 'object':
-      return isObject(schema['additionalProperties']) && !isObject(schema['properties']) ? `object of ${sayType(schema['additionalProperties'])}` : 'object';
+      return isObject(schema['additionalProperties']) && !isObject(schema['properties'])
+        ? `object of ${sayType(schema['additionalProperties'])}`
+        : 'object';
     case 'string':
       return TEXTS[textOf(schema['format'])] ?? 'text';
     case 'integer':

@@ -83,12 +83,19 @@ export function decode(reading: Reading, cipher: CompiledCipher, options: Decode
   };
 }
 
-/** The likelihood of a reading averaged over the days in question; 0 where the cipher can't make it, or too little is read. */
-export function likelihoodOf(reading: Reading, cipher: CompiledCipher, options: DecodeOptions): number {
+/**
+ * The likelihood of a reading averaged over the days in question, without candidates; 0 where the cipher can't make it, or
+ * where too little is read. With the work it took.
+ */
+export function likelihoodOf(
+  reading: Reading,
+  cipher: CompiledCipher,
+  options: DecodeOptions,
+): { readonly likelihood: number; readonly steps: number } {
   const days = daysInQuestion(cipher, options.asOf, options.limits ?? {});
-  if (days === null || !canDate(cipher, days)) return 0;
-  const { found } = workOut(rowsOf(reading, cipher, options.lookAlikes ?? false), reading.breaks, cipher, days);
-  return found === null || found.givenUp ? 0 : found.spans.totalWeight() / daysIn(days);
+  if (days === null || !canDate(cipher, days)) return { likelihood: 0, steps: 0 };
+  const { found, steps } = workOut(rowsOf(reading, cipher, options.lookAlikes ?? false), reading.breaks, cipher, days);
+  return { likelihood: found === null || found.givenUp ? 0 : found.spans.totalWeight() / daysIn(days), steps };
 }
 
 function candidatesOf(working: Working, spans: SpanTable, weight: number, cipher: CompiledCipher): readonly Candidate[] {

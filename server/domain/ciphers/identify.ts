@@ -14,7 +14,7 @@ export type Identification<Entry extends Entered> = {
   readonly ranked: readonly Ranked<Entry>[];
   /** How many can make it, listed or not. */
   readonly able: number;
-  /** How many were tried. */
+  /** How many were tried: all, unless so little is read that the work allowed ran out before. */
   readonly tried: number;
 };
 
@@ -22,6 +22,9 @@ export type IdentifyOptions = DecodeOptions & {
   /** At most so many are decoded and listed; all where it is not said. */
   readonly most?: number | undefined;
 };
+
+/** Work allowed for ranking, over all ciphers: some half a second. */
+export const STEPS_TO_IDENTIFY = 40_000_000;
 
 /**
  * Maker unknown: tries every cipher. Those that can't make the mark are counted, not listed; most of them are turned away by
@@ -33,11 +36,18 @@ export function identify<Entry extends Entered>(
   options: IdentifyOptions,
 ): Identification<Entry> {
   const outline = outlineOf(reading, options.lookAlikes ?? false);
-  const able = entries
-    .filter((entry) => canSpell(entry.cipher, outline))
-    .map((entry) => ({ entry, likelihood: likelihoodOf(reading, entry.cipher, options) }))
-    .filter((one) => one.likelihood > 0)
-    .sort((one, other) => other.likelihood - one.likelihood);
+  const able: { readonly entry: Entry; readonly likelihood: number }[] = [];
+  let stepsLeft = STEPS_TO_IDENTIFY;
+  let tried = 0;
+  for (const entry of entries) {
+    if (stepsLeft <= 0) break;
+    tried += 1;
+    if (!canSpell(entry.cipher, outline)) continue;
+    const { likelihood, steps } = likelihoodOf(reading, entry.cipher, options);
+    stepsLeft -= steps;
+    if (likelihood > 0) able.push({ entry, likelihood });
+  }
+  able.sort((one, other) => other.likelihood - one.likelihood);
   const ranked = able.slice(0, options.most).map(({ entry }) => ({ entry, decoding: decode(reading, entry.cipher, options) }));
-  return { ranked, able: able.length, tried: entries.length };
+  return { ranked, able: able.length, tried };
 }

@@ -95,17 +95,14 @@ class Splitter {
     this.#places = matter.rows.length + 1;
     const lattice = buildLattice(matter.rows, [], matter.cipher);
     const walker = new Walker(lattice, yearsBetween(ALL_DAYS.from, ALL_DAYS.to, matter.cipher.calendar));
-    const states = Array.from({ length: this.#places }, (_, place) => this.#statesAt(place));
     this.#readable = matter.cipher.fields.map((field) => {
       const readable = new Set<number>();
-      states.forEach((starts, start) => {
-        for (const choice of walker.choicesOf(field, starts)) {
+      for (let start = 0; start < this.#places; start += 1) {
+        for (const choice of walker.choicesOf(field, this.#statesAt(start))) {
           if (isDated(field.kind) && choice.key >= 0 && choice.numbers.values.length === 0) continue;
-          states.forEach((ends, end) => {
-            if (end >= start && choice.to.some((state) => ends.includes(state))) readable.add(start * this.#places + end);
-          });
+          for (const state of choice.to) for (const end of this.#placesOf(state)) readable.add(start * this.#places + end);
         }
-      });
+      }
       return readable;
     });
   }
@@ -151,6 +148,13 @@ class Splitter {
   #statesAt(place: number): number[] {
     if (this.#star < 0 || place <= this.#star) return [place];
     return place === this.#star + 1 ? [this.#star, this.#places - 1] : [place - 1];
+  }
+
+  /** The other way round. */
+  #placesOf(state: number): readonly number[] {
+    if (this.#star < 0 || state < this.#star) return [state];
+    if (state === this.#star) return [state, state + 1];
+    return [state === this.#places - 1 ? this.#star + 1 : state + 1];
   }
 
   /** 0 where the field can be read there. A field can lie wholly inside a `*`; otherwise it takes a glyph at least. */

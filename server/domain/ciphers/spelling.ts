@@ -35,35 +35,32 @@ export function likeliestSpelling(
   return { spans, details: Object.fromEntries(details) };
 }
 
+/** A state some link can end in, and the likeliest way there. */
+type Reached = { readonly state: number; readonly likelihood: number; readonly before: Reached | null };
+
 /** The likeliest way from start to end: where each link begins and ends. */
 function likeliestWay(choices: readonly Choice[], lattice: Lattice): readonly { readonly from: number; readonly to: number }[] {
-  let likelihood = new Float64Array(lattice.states);
-  likelihood[0] = 1;
-  const cameFrom: Int32Array[] = [];
+  let reached: readonly Reached[] = [{ state: 0, likelihood: 1, before: null }];
   for (const choice of choices) {
-    const next = new Float64Array(lattice.states);
-    const back = new Int32Array(lattice.states).fill(-1);
+    const next: Reached[] = [];
     for (let way = 0; way < choice.from.length; way += 1) {
-      const from = choice.from[way] ?? 0;
-      const to = choice.to[way] ?? 0;
-      const here = (likelihood[from] ?? 0) * (choice.best[way] ?? 0);
-      if (here > (next[to] ?? 0)) {
-        next[to] = here;
-        back[to] = from;
-      }
+      const before = reached.find(({ state }) => state === choice.from[way]);
+      if (before === undefined) continue;
+      const state = choice.to[way] ?? 0;
+      const likelihood = before.likelihood * (choice.best[way] ?? 0);
+      const known = next.findIndex((other) => other.state === state);
+      if (known < 0) next.push({ state, likelihood, before });
+      else if (likelihood > (next[known]?.likelihood ?? 0)) next[known] = { state, likelihood, before };
     }
-    likelihood = next;
-    cameFrom.push(back);
+    reached = next;
   }
-  let state = 0;
-  lattice.isEnd.forEach((isEnd, candidate) => {
-    if (isEnd && (lattice.isEnd[state] !== true || (likelihood[candidate] ?? 0) > (likelihood[state] ?? 0))) state = candidate;
-  });
   const ways: { from: number; to: number }[] = [];
-  for (const back of cameFrom.toReversed()) {
-    const from = back[state] ?? 0;
-    ways.unshift({ from, to: state });
-    state = from;
+  let last = reached
+    .filter(({ state }) => lattice.isEnd[state] === true)
+    .reduce<Reached | null>((best, one) => (best === null || one.likelihood > best.likelihood ? one : best), null);
+  while (last !== null && last.before !== null) {
+    ways.unshift({ from: last.before.state, to: last.state });
+    last = last.before;
   }
   return ways;
 }

@@ -6,7 +6,6 @@ const SECRET = /^[A-Za-z0-9_-]{43}$/;
 
 /** The session cookie of one installation. */
 export type SessionCookie = {
-  readonly name: string;
   /** The secret a request carries; none where the cookie is missing, misshapen, or there twice and so not to be told apart. */
   readonly read: (request: Request) => string | null;
   readonly write: (response: Response, secret: string) => void;
@@ -22,7 +21,6 @@ export function sessionCookie({ publicOrigin, environment }: Pick<Config, 'publi
   const name = secure ? '__Host-session' : 'session';
   const attributes = { httpOnly: true, sameSite: 'lax', path: '/', secure } as const;
   return {
-    name,
     read: (request) => {
       const values = valuesOf(request.headers.cookie ?? '', name);
       const [secret] = values;

@@ -10,10 +10,12 @@ import { mountCiphers } from './ciphers.ts';
 import { mountDecode } from './decode.ts';
 import { mountFit } from './fit.ts';
 import { mountMakers } from './makers.ts';
+import { mountMembers } from './members.ts';
 import { mountModels } from './models.ts';
 import { mountNotices } from './notices.ts';
 import { mountPartTypes } from './part-types.ts';
 import { mountPost } from './post.ts';
+import { mountSecondFactors } from './second-factors.ts';
 import { mountSerialRanges } from './serial-ranges.ts';
 import { mountSources } from './sources.ts';
 
@@ -30,7 +32,9 @@ export function mountApi(dependencies: ApiDependencies): Router {
   mountSerialRanges(router, dependencies);
   mountSources(router, dependencies);
   mountAccounts(router, dependencies);
+  mountSecondFactors(router, dependencies);
   mountNotices(router, dependencies);
+  mountMembers(router, dependencies);
   if (dependencies.localPostDirectory !== undefined) mountPost(router, dependencies.localPostDirectory);
 
   let description: ApiDescription | undefined;

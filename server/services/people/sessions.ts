@@ -18,7 +18,7 @@ export const LIFETIMES = {
 } as const satisfies Record<string, Lifetime>;
 
 /** Seconds a proof of identity is good for. */
-export const PROOF_LASTS = 10 * MINUTE;
+const PROOF_LASTS = 10 * MINUTE;
 
 /** Whether a member has a confirmed authenticator or a passkey; `members.id` must be in reach. */
 export const HAS_SECOND_FACTOR = `(

@@ -37,7 +37,7 @@ const REFUSALS = {
   suspended: ['not-allowed', 'This account is suspended. The letter to its address says why.'],
   demo: ['not-allowed', 'The demo’s accounts are for trying the register out; here they are closed.'],
 } as const;
-type Outcome = { readonly me: MeOnRecord } | { readonly refused: keyof typeof REFUSALS };
+type Refused = { readonly refused: keyof typeof REFUSALS };
 
 /**
  * Signs in with a passkey: alone, or as the second factor after a password. A device that knows its user is both something they have and
@@ -64,26 +64,39 @@ export async function finishPasskeySignIn(
   await claimAttempt({ kind: 'second-factor', account, network: context.network }, knex);
   const challenge = await takeChallenge(assertion.response.clientDataJSON, { memberId: null, purpose: 'sign-in' }, knex);
 
-  const outcome = await withTransaction<Outcome>(knex, async (trx) => {
-    const known = await Passkey.query(trx).findOne({ credentialId: assertion.id });
-    // First the member, as everywhere, then the passkey, whose counter nobody else may move meanwhile.
-    const member = known && (await Member.query(trx).findById(known.memberId).forUpdate());
-    const passkey = known && (await Passkey.query(trx).findById(known.id).forUpdate());
-    const refused = !member || !passkey || !challenge || !(await use(passkey, assertion, challenge, rules.site, trx))
-      ? 'wrong-passkey'
-      : whyClosed(member, rules);
-    if (refused === null && member) {
-      await forgiveAttempts('second-factor', account, trx);
-      return { me: await completeSignIn(member, 'second-factor', context, trx) };
+  const outcome = await withTransaction<Refused | { readonly me: MeOnRecord }>(knex, async (trx) => {
+    const found = await lockPasskey(assertion.id, trx);
+    if (!found || !challenge || !(await use(found.passkey, assertion, challenge, rules.site, trx))) {
+      return refuse('wrong-passkey', found?.member, context, trx);
     }
-    const reason = refused ?? 'wrong-passkey';
-    const subject = member ? { kind: 'member', id: member.id } : null;
-    await writeAudit({ act: 'session.refused', actorId: null, subject, detail: { reason }, requestId: context.requestId }, trx);
-    return { refused: reason };
+    const closed = whyClosed(found.member, rules);
+    if (closed !== null) return refuse(closed, found.member, context, trx);
+    await forgiveAttempts('second-factor', account, trx);
+    return { me: await completeSignIn(found.member, 'second-factor', context, trx) };
   });
   if ('me' in outcome) return outcome.me;
   const [kind, detail] = REFUSALS[outcome.refused];
   throw new ProblemError(kind, detail);
+}
+
+/** First the member, as everywhere, then the passkey, whose counter nobody else may move meanwhile. */
+async function lockPasskey(credentialId: string, trx: Knex.Transaction): Promise<{ readonly member: Member; readonly passkey: Passkey } | null> {
+  const known = await Passkey.query(trx).findOne({ credentialId });
+  if (!known) return null;
+  const member = await Member.query(trx).findById(known.memberId).forUpdate();
+  const passkey = await Passkey.query(trx).findById(known.id).forUpdate();
+  return member && passkey ? { member, passkey } : null;
+}
+
+async function refuse(
+  reason: keyof typeof REFUSALS,
+  member: Member | undefined,
+  { requestId }: RequestContext,
+  trx: Knex.Transaction,
+): Promise<Refused> {
+  const subject = member ? { kind: 'member', id: member.id } : null;
+  await writeAudit({ act: 'session.refused', actorId: null, subject, detail: { reason }, requestId }, trx);
+  return { refused: reason };
 }
 
 function whyClosed({ suspendedAt, demo }: Member, { demoSignIns }: SignInRules): 'suspended' | 'demo' | null {

@@ -13,7 +13,7 @@ export async function removeAuthenticator(viewer: MemberViewer, context: Request
   await changeSecondFactors(
     viewer,
     { way: 'authenticator', deed: 'removed' },
-    (_member, trx) => Authenticator.query(trx).delete().where({ memberId: viewer.id }).whereNotNull('confirmedAt').throwIfNotFound(),
+    async (_member, trx) => await Authenticator.query(trx).delete().where({ memberId: viewer.id }).whereNotNull('confirmedAt').throwIfNotFound(),
     context,
     knex,
   );

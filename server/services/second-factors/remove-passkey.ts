@@ -13,7 +13,7 @@ export async function removePasskey(viewer: MemberViewer, id: string, context: R
   await changeSecondFactors(
     viewer,
     { way: 'passkey', deed: 'removed' },
-    (_member, trx) => Passkey.query(trx).delete().where({ id, memberId: viewer.id }).throwIfNotFound(),
+    async (_member, trx) => await Passkey.query(trx).delete().where({ id, memberId: viewer.id }).throwIfNotFound(),
     context,
     knex,
   );

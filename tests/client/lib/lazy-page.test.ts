@@ -8,7 +8,7 @@ const page: PageModule = { Component: () => null, loader: () => () => 'loaded' }
 const load = (from: () => Promise<PageModule>) => {
   const lazy = lazyPage(from, queryClient);
   if (typeof lazy !== 'function') throw new Error('A page is loaded by a function');
-  return lazy({ path: '/x' });
+  return lazy();
 };
 const gone = () => Promise.reject(new TypeError('Failed to fetch dynamically imported module'));
 const reload = vi.fn();

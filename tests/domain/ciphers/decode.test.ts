@@ -158,7 +158,11 @@ describe('limits and days in use', () => {
 
 describe('what would settle it', () => {
   it('names the glyphs, the most telling first', () => {
-    expect(ask(TEN, '?BLOI').settle).toEqual([{ position: 0, bits: expect.closeTo(0.2, 12) }]);
+    const [first, ...others] = ask(TEN, '?BLOI').settle;
+    expect(first?.position).toBe(0);
+    // Only B leaves anything open: 2 dates of 10, told apart by one bit.
+    expect(first?.bits).toBeCloseTo(0.2, 12);
+    expect(others).toEqual([]);
     const { settle } = ask(TEN, '[BO]LC[OC]');
     expect(settle).toEqual([
       { position: 0, bits: 1 },

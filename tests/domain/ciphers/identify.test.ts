@@ -43,6 +43,15 @@ describe('identify', () => {
     }
   });
 
+  it('stops, and says how far it came, where so little is read that the work never ends', { timeout: 60_000 }, () => {
+    const wide = compiled({ ...TEN, usedFrom: '1700-01-01', usedTo: '1999-12-31' });
+    const many = Array.from({ length: 2_000 }, () => ({ cipher: wide }));
+    const { tried, able } = identify(parsed('??????'), many, { asOf: AS_OF, most: 0 });
+    expect(tried).toBeGreaterThan(10);
+    expect(tried).toBeLessThan(2_000);
+    expect(able).toBe(tried);
+  });
+
   it('lists no more than it is asked for, and still counts all that can make it', () => {
     expect(namesFor('C147', { most: 1 })).toEqual(['short hes']);
     expect(identify(parsed('C147'), ENTRIES, { asOf: AS_OF, most: 0 })).toEqual({ ranked: [], able: 2, tried: 4 });

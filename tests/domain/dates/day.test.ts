@@ -58,8 +58,7 @@ describe('a day as an integer', () => {
   });
 
   it('is the same number in New York and on Lord Howe', () => {
-    expect(['America/New_York', 'Australia/Lord_Howe']).toContain(process.env['TZ']);
-    expect(Intl.DateTimeFormat().resolvedOptions().timeZone).toBe(process.env['TZ']);
+    expect(['America/New_York', 'Australia/Lord_Howe']).toContain(Intl.DateTimeFormat().resolvedOptions().timeZone);
     const summerTimeEnds = ['1939-04-30', '1945-09-30', '2026-03-08', '2026-04-05', '2026-10-04', '2026-11-01'];
     expect(summerTimeEnds.map(parseDay)).toEqual([-11_204, -8_859, 20_520, 20_548, 20_730, 20_758].map((value) => ({ ok: true, value })));
   });

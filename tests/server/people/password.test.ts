@@ -1,4 +1,4 @@
-import { describe, expect, test } from 'vitest';
+import { afterEach, describe, expect, test, vi } from 'vitest';
 import { LinkToken } from '#db/models/link-token.ts';
 import { Member } from '#db/models/member.ts';
 import { Session } from '#db/models/session.ts';
@@ -7,6 +7,10 @@ import { PASSWORD, sessionOf, usePeople } from '#tests/support/people.ts';
 
 const people = usePeople();
 const NEW = 'a new one, longer than the old';
+
+afterEach(() => {
+  vi.useRealTimers();
+});
 
 async function askForLink(email: string): Promise<string> {
   await people.browser().post('/api/password/forgot').send({ email }).expect(200, { done: true });
@@ -75,6 +79,21 @@ describe('a forgotten password', () => {
     await link.patch({ expiresAt: people.knex.raw(`now() - interval '1 second'`) });
     await people.browser().post('/api/password/reset').send({ token, password: NEW }).expect(422);
     await mustSignIn(member.email, PASSWORD, 200);
+  });
+
+  test.each([
+    ['fast', 2],
+    ['slow', -2],
+  ])('link lives no shorter and no longer on a server whose clock is two hours %s', async (_how, hours) => {
+    const member = await people.addMember();
+    vi.useFakeTimers({ toFake: ['Date'], now: Date.now() + hours * 3_600_000 });
+    const old = await askForLink(member.email);
+    await LinkToken.query(people.knex)
+      .findById(hashOfSecret(old))
+      .patch({ expiresAt: people.knex.raw(`expires_at - interval '1 hour 1 second'`) });
+    await people.browser().post('/api/password/reset').send({ token: old, password: NEW }).expect(422);
+    const token = await askForLink(member.email);
+    await people.browser().post('/api/password/reset').send({ token, password: NEW }).expect(200);
   });
 
   test('link is left as it was by a password that is refused', async () => {

@@ -1,12 +1,13 @@
 import fc from 'fast-check';
-import type {
-  CipherDefinition,
-  CipherException,
-  DateField,
-  DatedField,
-  FieldDefinition,
-  FieldWidth,
-  SymbolSet,
+import {
+  WEEK_RULES,
+  type CipherDefinition,
+  type CipherException,
+  type DateField,
+  type DatedField,
+  type FieldDefinition,
+  type FieldWidth,
+  type SymbolSet,
 } from '#domain/ciphers/definition.ts';
 import { BREAK_CHARACTERS } from '#domain/marks/reading.ts';
 import { dayNumber, isoText } from './calendar-by-day.ts';
@@ -99,18 +100,22 @@ function valuesSet(field: DateField, firstYear: number): fc.Arbitrary<SymbolSet>
 
 type Drawn = { readonly field: FieldDefinition; readonly set: SymbolSet | null };
 
+/** Only week fields have a rule. */
+function weekRuleFor(field: DateField): fc.Arbitrary<Pick<DatedField, 'week'>> {
+  return field === 'week' ? fc.constantFrom(undefined, ...WEEK_RULES).map((week) => (week === undefined ? {} : { week })) : fc.constant({});
+}
+
 function datedField(field: DateField, firstYear: number): fc.Arbitrary<Drawn> {
   const symbols = `${field} set`;
-  const rule = field === 'week' ? { week: fc.constantFrom('iso' as const, 'simple' as const, 'first-full-sunday' as const) } : {};
-  const inDigits = fc.record({ width: fc.constantFrom(...WIDTHS[field]), numerals: fc.boolean(), set: digitsSet, ...rule }).map(
-    ({ width, numerals, set, ...rest }): Drawn => ({
-      field: { field, symbols: numerals ? 'numerals' : symbols, width, ...rest } satisfies DatedField,
+  const inDigits = fc
+    .record({ width: fc.constantFrom(...WIDTHS[field]), numerals: fc.boolean(), set: digitsSet, rule: weekRuleFor(field) })
+    .map(({ width, numerals, set, rule }): Drawn => ({
+      field: { field, symbols: numerals ? 'numerals' : symbols, width, ...rule },
       set: numerals ? null : set,
-    }),
-  );
+    }));
   const inValues = fc
-    .record({ set: valuesSet(field, firstYear), ...rule })
-    .map(({ set, ...rest }): Drawn => ({ field: { field, symbols, width: [1, 2], ...rest } satisfies DatedField, set }));
+    .record({ set: valuesSet(field, firstYear), rule: weekRuleFor(field) })
+    .map(({ set, rule }): Drawn => ({ field: { field, symbols, width: [1, 2], ...rule }, set }));
   return fc.oneof(inDigits, inValues);
 }
 
@@ -158,9 +163,8 @@ const plainCipher: fc.Arbitrary<CipherDefinition> = fc
         usedFrom: isoText(from),
         usedTo: inUse ? null : isoText(from + length),
       };
-    }).map((definition) => ({ definition, last: from + length })),
-  )
-  .map(({ definition }) => definition);
+    }),
+  );
 
 /** Exceptions for texts that the cipher does cast, mostly on days of its life. */
 function exceptionFor(definition: CipherDefinition, last: number): fc.Arbitrary<CipherException | null> {

@@ -9,14 +9,27 @@ const NAMED = { slug: 'a', name: 'A' };
 
 function fitment(verdict: Fitment['verdict'], built: Fitment['built']): Fitment {
   const provenance = { version: 1, enteredBy: 'Harrow Lane', enteredAt: '2026-03-04T10:00:00Z', sources: [] };
-  return { id: '018d994d-f6c0-759e-9388-3e9cb54a1357', model: NAMED, position: NAMED, prefix: null, first: null, last: null, built, verdict, note: null, provenance };
+  return {
+    id: '018d994d-f6c0-759e-9388-3e9cb54a1357',
+    model: NAMED,
+    position: NAMED,
+    prefix: null,
+    first: null,
+    last: null,
+    built,
+    verdict,
+    note: null,
+    provenance,
+  };
 }
 
 const cipher = (from: string | null, to: string | null) => ({ title: 'Key', used: { from, to } });
 
 describe('castingRule', () => {
   it('shows the casting, the machines it was built into, and its cipher', () => {
-    const rule = castingRule({ made: MADE, fitments: [fitment('as-built', { from: '1938-08-01', to: '1944-05-31' })] }, [cipher('1928-01-01', '1954-12-31')]);
+    const rule = castingRule({ made: MADE, fitments: [fitment('as-built', { from: '1938-08-01', to: '1944-05-31' })] }, [
+      cipher('1928-01-01', '1954-12-31'),
+    ]);
     expect(rule?.lanes.map(({ name }) => name)).toEqual(['made', 'its machines built', 'cipher in use']);
   });
   it('zooms to the casting, not to the cipher’s long life', () => {
@@ -27,22 +40,33 @@ describe('castingRule', () => {
     ]);
   });
   it('leaves out machines it only bolts on to', () => {
-    expect(castingRule({ made: MADE, fitments: [fitment('later-fits', { from: '1950-01-01', to: '1951-01-01' })] }, [])?.lanes.map(({ name }) => name)).toEqual(['made']);
+    expect(
+      castingRule({ made: MADE, fitments: [fitment('later-fits', { from: '1950-01-01', to: '1951-01-01' })] }, [])?.lanes.map(
+        ({ name }) => name,
+      ),
+    ).toEqual(['made']);
   });
   it('names several ciphers apart', () => {
-    expect(castingRule({ made: null, fitments: [] }, [cipher('1928-01-01', null), cipher('1930-01-01', null)])?.lanes.map(({ name }) => name)).toEqual([
-      'cipher 1 in use',
-      'cipher 2 in use',
-    ]);
+    expect(
+      castingRule({ made: null, fitments: [] }, [cipher('1928-01-01', null), cipher('1930-01-01', null)])?.lanes.map(
+        ({ name }) => name,
+      ),
+    ).toEqual(['cipher 1 in use', 'cipher 2 in use']);
   });
   it('is not drawn where nothing is dated', () => {
-    expect(castingRule({ made: { from: null, to: null }, fitments: [fitment('as-built', null)] }, [cipher(null, null)])).toBeNull();
+    expect(
+      castingRule({ made: { from: null, to: null }, fitments: [fitment('as-built', null)] }, [cipher(null, null)]),
+    ).toBeNull();
   });
 });
 
 describe('ciphersInUse', () => {
   it('keeps those that share a day with the years it was made', () => {
-    const [early, touching, open] = [cipher('1919-01-01', '1927-12-31'), cipher('1930-01-01', '1938-07-01'), cipher('1944-03-31', null)];
+    const [early, touching, open] = [
+      cipher('1919-01-01', '1927-12-31'),
+      cipher('1930-01-01', '1938-07-01'),
+      cipher('1944-03-31', null),
+    ];
     expect(ciphersInUse(MADE, [early, touching, open])).toEqual([touching, open]);
   });
   it('keeps all where the years are not on record', () => {
@@ -64,7 +88,12 @@ describe('joinSpans', () => {
     ]);
   });
   it('lets an open end swallow what comes after', () => {
-    expect(joinSpans([{ from: '1938-01-01', to: null }, { from: '1950-01-01', to: '1951-01-01' }])).toEqual([{ from: '1938-01-01', to: null }]);
+    expect(
+      joinSpans([
+        { from: '1938-01-01', to: null },
+        { from: '1950-01-01', to: '1951-01-01' },
+      ]),
+    ).toEqual([{ from: '1938-01-01', to: null }]);
   });
 });
 

@@ -1,8 +1,19 @@
 import { describe, expect, it } from 'vitest';
-import { fieldRemarks, keyOf, sayField, sayWidth, sayYearStart, symbolLines, widthOf } from '#client/features/ciphers/cipher-words.ts';
+import {
+  fieldRemarks,
+  keyOf,
+  sayField,
+  sayWidth,
+  sayYearStart,
+  symbolLines,
+  widthOf,
+} from '#client/features/ciphers/cipher-words.ts';
 import type { DigitsSet, ValuesSet } from '#domain/ciphers/definition.ts';
 
-const BLOCKPRINT: DigitsSet = { kind: 'digits', symbols: { T: '0', B: '1', L: '2', O: '3', C: '4', K: '5', P: '6', R: '7', I: '8', N: '9' } };
+const BLOCKPRINT: DigitsSet = {
+  kind: 'digits',
+  symbols: { T: '0', B: '1', L: '2', O: '3', C: '4', K: '5', P: '6', R: '7', I: '8', N: '9' },
+};
 const USED = { from: '1911-01-01', to: '1962-12-31' };
 
 describe('widths', () => {
@@ -63,17 +74,24 @@ describe('symbolLines', () => {
     expect(lines.at(-1)?.means).toBe('the figure before it again');
   });
   it('names months and quarters', () => {
-    expect(symbolLines({ kind: 'values', symbols: { A: 1, M: 12 } }, 'month', USED, '2026-12-01').map(({ means }) => means)).toEqual(['January', 'December']);
+    expect(
+      symbolLines({ kind: 'values', symbols: { A: 1, M: 12 } }, 'month', USED, '2026-12-01').map(({ means }) => means),
+    ).toEqual(['January', 'December']);
     expect(symbolLines({ kind: 'values', symbols: { P: 1 } }, 'quarter', USED, '2026-12-01')[0]?.means).toBe('January to March');
   });
   it('spells out a cycle of years over the cipher’s life and no further', () => {
     const years: ValuesSet = { kind: 'values', symbols: { A: 1911, Y: 1930 }, repeatsEvery: 20 };
     expect(symbolLines(years, 'year', USED, '2026-12-01').map(({ means }) => means)).toEqual(['1911, 1931, 1951', '1930, 1950']);
-    expect(symbolLines(years, 'year', { from: '1931-01-01', to: null }, '1972-06-01').map(({ means }) => means)).toEqual(['1931, 1951, 1971', '1950, 1970']);
+    expect(symbolLines(years, 'year', { from: '1931-01-01', to: null }, '1972-06-01').map(({ means }) => means)).toEqual([
+      '1931, 1951, 1971',
+      '1950, 1970',
+    ]);
     expect(symbolLines(years, 'year', { from: '1915-01-01', to: '1916-01-01' }, '2026-12-01')[0]?.means).toBe('no year in use');
   });
   it('says all that a symbol may stand for', () => {
-    expect(symbolLines({ kind: 'values', symbols: { J: [1, 6, 7] } }, 'month', USED, '2026-12-01')[0]?.means).toBe('January or June or July');
+    expect(symbolLines({ kind: 'values', symbols: { J: [1, 6, 7] } }, 'month', USED, '2026-12-01')[0]?.means).toBe(
+      'January or June or July',
+    );
   });
 });
 

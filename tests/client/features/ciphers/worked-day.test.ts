@@ -4,7 +4,10 @@ import { choiceOfDay, lifeOf, workDay } from '#client/features/ciphers/worked-da
 import type { CipherDefinition } from '#domain/ciphers/definition.ts';
 import { dayOf } from '#domain/dates/day.ts';
 
-const KEY = { kind: 'digits', symbols: { B: '1', L: '2', O: '3', C: '4', K: '5', P: '6', R: '7', I: '8', N: '9', T: '0' } } as const;
+const KEY = {
+  kind: 'digits',
+  symbols: { B: '1', L: '2', O: '3', C: '4', K: '5', P: '6', R: '7', I: '8', N: '9', T: '0' },
+} as const;
 const TEN: CipherDefinition = {
   fields: [
     { field: 'month', symbols: 'key', width: [1, 2] },
@@ -31,10 +34,15 @@ describe('lifeOf', () => {
 describe('choiceOfDay', () => {
   it('always lies in the cipher’s life', () => {
     fc.assert(
-      fc.property(fc.integer({ min: -200_000, max: 200_000 }), fc.integer({ min: -100_000, max: 100_000 }), fc.integer({ min: 1, max: 80_000 }), (today, from, days) => {
-        const day = choiceOfDay(today, { from, to: from + days - 1 });
-        return day >= from && day < from + days;
-      }),
+      fc.property(
+        fc.integer({ min: -200_000, max: 200_000 }),
+        fc.integer({ min: -100_000, max: 100_000 }),
+        fc.integer({ min: 1, max: 80_000 }),
+        (today, from, days) => {
+          const day = choiceOfDay(today, { from, to: from + days - 1 });
+          return day >= from && day < from + days;
+        },
+      ),
     );
   });
   it('is the same all day and another the next', () => {
@@ -61,7 +69,10 @@ describe('workDay', () => {
   });
   it('has no mark for a day the cipher has no symbols for', () => {
     const noJuly: CipherDefinition = {
-      fields: [{ field: 'month', symbols: 'months', width: 1 }, { field: 'year', symbols: 'numerals', width: 2 }],
+      fields: [
+        { field: 'month', symbols: 'months', width: 1 },
+        { field: 'year', symbols: 'numerals', width: 2 },
+      ],
       symbolSets: { months: { kind: 'values', symbols: { A: 1 } } },
       usedFrom: '1928-01-01',
       usedTo: '1954-12-31',

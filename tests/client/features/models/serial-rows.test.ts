@@ -29,7 +29,8 @@ function series(ranges: ModelRange[], anchors: ModelSeries['anchors'] = [], give
   return { ...SERIES, provenance: PROVENANCE, ranges, anchors, ...given };
 }
 
-const rows = (...ranges: ModelRange[]) => serialRows(ranges).map(({ first, last, ranges: held }) => [first, last, [...held.keys()].join()]);
+const rows = (...ranges: ModelRange[]) =>
+  serialRows(ranges).map(({ first, last, ranges: held }) => [first, last, [...held.keys()].join()]);
 
 describe('serialRows', () => {
   it('cuts the numbers where an account’s range begins or ends', () => {
@@ -66,7 +67,9 @@ describe('serialRows', () => {
 
 describe('accountsOf', () => {
   it('puts the register’s reading first, each account once', () => {
-    const accounts = accountsOf(series([range('z', '1', '5'), range('b', '1', '9', true), range('b', '10', '19', true), range('a', '1', '5')]));
+    const accounts = accountsOf(
+      series([range('z', '1', '5'), range('b', '1', '9', true), range('b', '10', '19', true), range('a', '1', '5')]),
+    );
     expect(accounts.map(({ id, preferred }) => [id, preferred])).toEqual([
       ['b', true],
       ['a', false],
@@ -97,8 +100,13 @@ describe('serialRule', () => {
   });
   it('names lanes apart where there are several series, even of one prefix', () => {
     const run = (label: string) => series([range('a', '1', '9', true)], [], { label });
-    expect(serialRule([run('first run'), run('second run')])?.lanes.map(({ name }) => name)).toEqual(['run 1 ranges', 'run 2 ranges']);
-    expect(serialRule([run('first run'), series([range('a', '1', '9')], [], { prefix: '5C' })])?.lanes.map(({ name }) => name)).toEqual(['3C ranges', '5C ranges']);
+    expect(serialRule([run('first run'), run('second run')])?.lanes.map(({ name }) => name)).toEqual([
+      'run 1 ranges',
+      'run 2 ranges',
+    ]);
+    expect(
+      serialRule([run('first run'), series([range('a', '1', '9')], [], { prefix: '5C' })])?.lanes.map(({ name }) => name),
+    ).toEqual(['3C ranges', '5C ranges']);
   });
   it('is not drawn where nothing is dated', () => {
     expect(serialRule([series([])])).toBeNull();

@@ -2,7 +2,13 @@ import { describe, expect, it } from 'vitest';
 import { FACT_KINDS } from '#contract/sources.ts';
 import { groupFacts, pathOfFact, sayFactKind } from '#client/features/sources/say-source.ts';
 
-const fact = (kind: (typeof FACT_KINDS)[number], slug: string | null) => ({ kind, slug, title: 'title', field: null, locator: null });
+const fact = (kind: (typeof FACT_KINDS)[number], slug: string | null) => ({
+  kind,
+  slug,
+  title: 'title',
+  field: null,
+  locator: null,
+});
 
 describe('pathOfFact', () => {
   it('leads to a page of the catalogue for every kind that has one', () => {

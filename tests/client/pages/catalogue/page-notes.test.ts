@@ -2,8 +2,18 @@ import { describe, expect, it } from 'vitest';
 import type { FactSource, Provenance } from '#contract/common.ts';
 import { bySource, pageNotes, provenanceOfField } from '#client/pages/catalogue/page-notes.ts';
 
-const cited = (slug: string, field: string | null = null, locator: string | null = null): FactSource => ({ field, source: { slug, kind: 'book', title: slug }, locator, note: null });
-const entered = (sources: FactSource[], enteredBy = 'Harrow Lane', enteredAt = '2026-03-04T10:00:00Z'): Provenance => ({ version: 1, enteredBy, enteredAt, sources });
+const cited = (slug: string, field: string | null = null, locator: string | null = null): FactSource => ({
+  field,
+  source: { slug, kind: 'book', title: slug },
+  locator,
+  note: null,
+});
+const entered = (sources: FactSource[], enteredBy = 'Harrow Lane', enteredAt = '2026-03-04T10:00:00Z'): Provenance => ({
+  version: 1,
+  enteredBy,
+  enteredAt,
+  sources,
+});
 
 describe('pageNotes', () => {
   it('numbers sources from the top of the page and gives each its block', () => {
@@ -28,12 +38,22 @@ describe('pageNotes', () => {
     ['it was entered another day', entered([cited('book')], 'Harrow Lane', '2026-03-05T10:00:00Z')],
     ['it stands at another place', entered([cited('book', null, 'page 9')])],
   ])('keeps notes apart where %s', (_, other) => {
-    const notes = pageNotes([{ block: 'what', facts: [{ key: 'one', provenance: entered([cited('book')]) }, { key: 'other', provenance: other }] }]);
+    const notes = pageNotes([
+      {
+        block: 'what',
+        facts: [
+          { key: 'one', provenance: entered([cited('book')]) },
+          { key: 'other', provenance: other },
+        ],
+      },
+    ]);
     expect(notes.numbersOf('other')).toEqual([2]);
   });
   it('has a note even for a fact without a source', () => {
     const notes = pageNotes([{ block: 'what', facts: [{ key: 'made', provenance: entered([]) }] }]);
-    expect(notes.beside('what')).toEqual([{ number: 1, source: null, version: 1, enteredBy: 'Harrow Lane', enteredAt: '2026-03-04T10:00:00Z' }]);
+    expect(notes.beside('what')).toEqual([
+      { number: 1, source: null, version: 1, enteredBy: 'Harrow Lane', enteredAt: '2026-03-04T10:00:00Z' },
+    ]);
   });
   it('has no numbers for a fact that was not given', () => {
     expect(pageNotes([]).numbersOf('made')).toEqual([]);
@@ -58,7 +78,13 @@ describe('provenanceOfField', () => {
 describe('bySource', () => {
   it('puts the notes of one source together, in the order they are met', () => {
     const notes = pageNotes([
-      { block: 'what', facts: ['a', 'b', 'a'].map((slug, place) => ({ key: String(place), provenance: entered([cited(slug, null, `page ${place}`)]) })) },
+      {
+        block: 'what',
+        facts: ['a', 'b', 'a'].map((slug, place) => ({
+          key: String(place),
+          provenance: entered([cited(slug, null, `page ${place}`)]),
+        })),
+      },
     ]).beside('what');
     expect(bySource(notes).map((group) => group.map(({ number }) => number))).toEqual([[1, 3], [2]]);
   });

@@ -10,7 +10,10 @@ const DOCUMENT = ApiDescription.parse({
         operationId: 'readCasting',
         summary: 'One casting',
         parameters: [{ name: 'slug', in: 'path', required: true, schema: { type: 'string' } }],
-        responses: { 200: { content: { 'application/json': { schema: { type: 'object' } } } }, 404: { $ref: '#/components/responses/not-found' } },
+        responses: {
+          200: { content: { 'application/json': { schema: { type: 'object' } } } },
+          404: { $ref: '#/components/responses/not-found' },
+        },
       },
     },
   },

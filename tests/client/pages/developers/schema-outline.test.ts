@@ -4,17 +4,35 @@ import { outlineSchema, sayType } from '#client/pages/developers/schema-outline.
 
 /** As the description is made: from the very schemas that validate. */
 const jsonSchema = (schema: z.ZodType) => z.json().parse(z.toJSONSchema(schema, { io: 'input' }));
-const lines = (schema: z.ZodType) => outlineSchema(jsonSchema(schema)).map(({ depth, name, isOptional, type }) => `${'  '.repeat(depth)}${name}${isOptional ? '?' : ''} ${type}`.trimEnd());
+const lines = (schema: z.ZodType) =>
+  outlineSchema(jsonSchema(schema)).map(({ depth, name, isOptional, type }) =>
+    `${'  '.repeat(depth)}${name}${isOptional ? '?' : ''} ${type}`.trimEnd(),
+  );
 
 describe('outlineSchema', () => {
   it('goes through an object from top to bottom', () => {
-    expect(lines(z.object({ mark: z.string(), limits: z.object({ from: z.iso.date() }).optional() }))).toEqual([' object', '  mark text', '  limits? object', '    from day']);
+    expect(lines(z.object({ mark: z.string(), limits: z.object({ from: z.iso.date() }).optional() }))).toEqual([
+      ' object',
+      '  mark text',
+      '  limits? object',
+      '    from day',
+    ]);
   });
   it('unfolds the entries of a list', () => {
-    expect(lines(z.object({ items: z.array(z.object({ share: z.number() })) }))).toEqual([' object', '  items list of object', '    share number']);
+    expect(lines(z.object({ items: z.array(z.object({ share: z.number() })) }))).toEqual([
+      ' object',
+      '  items list of object',
+      '    share number',
+    ]);
   });
   it('says each shape a value may have', () => {
-    expect(lines(z.union([z.object({ a: z.string() }), z.object({ b: z.string() })]))).toEqual([' object', '  either object', '    a text', '  either object', '    b text']);
+    expect(lines(z.union([z.object({ a: z.string() }), z.object({ b: z.string() })]))).toEqual([
+      ' object',
+      '  either object',
+      '    a text',
+      '  either object',
+      '    b text',
+    ]);
   });
   it('looks through null', () => {
     expect(lines(z.object({ a: z.int() }).nullable())).toEqual([' object or null', '  a whole number']);
@@ -24,10 +42,15 @@ describe('outlineSchema', () => {
     expect(limit?.note).toBe('from 1; up to 100; 25 where it is left out');
   });
   it('points to a named shape instead of unfolding it', () => {
-    expect(outlineSchema({ $ref: '#/components/schemas/Provenance' })).toEqual([{ depth: 0, name: '', isOptional: false, type: 'Provenance', shape: 'Provenance', note: '' }]);
+    expect(outlineSchema({ $ref: '#/components/schemas/Provenance' })).toEqual([
+      { depth: 0, name: '', isOptional: false, type: 'Provenance', shape: 'Provenance', note: '' },
+    ]);
   });
   it('ends on a shape that holds itself', () => {
-    expect(outlineSchema({ type: 'array', items: { $ref: '#/components/schemas/__schema0' } })[0]).toMatchObject({ type: 'list of any JSON', shape: null });
+    expect(outlineSchema({ type: 'array', items: { $ref: '#/components/schemas/__schema0' } })[0]).toMatchObject({
+      type: 'list of any JSON',
+      shape: null,
+    });
   });
 });
 

@@ -1,0 +1,43 @@
+import type { AuditAct, AuditRow } from '#contract/admin.ts';
+
+/** Every act that is written down, as it is said of who did it. */
+export const ACT_WORDS: Readonly<Record<AuditAct, string>> = {
+  'account.opened': 'opened an account',
+  'account.refused': 'asked for an account at an address that has one',
+  'account.verified': 'confirmed an address',
+  'account.closed': 'closed the account',
+  'account.renamed': 'changed the name',
+  'account.exported': 'took a copy of the data on record',
+  'session.started': 'signed in',
+  'session.refused': 'was refused at sign-in',
+  'session.ended': 'ended sessions',
+  'password.changed': 'changed the password',
+  'password.reset-asked': 'asked for a new password',
+  'password.reset': 'set a new password by a link',
+  'email.change-asked': 'asked for another address',
+  'email.changed': 'changed the address',
+  'second-factor.added': 'added a second factor',
+  'second-factor.removed': 'removed a second factor',
+  'recovery-codes.renewed': 'made new recovery codes',
+  'recovery-code.used': 'used a recovery code',
+  'role.changed': 'changed a role',
+  'member.suspended': 'suspended a member',
+  'member.unsuspended': 'lifted a suspension',
+  'notices.chosen': 'chose which notices come by e-mail',
+};
+
+/** What was written down beside an act, part by part: `reason: wrong password`. */
+export function sayDetail(detail: AuditRow['detail']): readonly string[] {
+  return Object.entries(detail).map(([name, value]) => `${plain(name)}: ${sayValue(value)}`);
+}
+
+function sayValue(value: AuditRow['detail'][string]): string {
+  if (value === null) return 'none';
+  if (Array.isArray(value)) return value.length === 0 ? 'none' : value.map(sayValue).join(', ');
+  return typeof value === 'object' ? JSON.stringify(value) : String(value);
+}
+
+/** `otherSessionsEnded` → `other sessions ended`. */
+function plain(name: string): string {
+  return name.replace(/([A-Z])/g, (letter) => ` ${letter.toLowerCase()}`);
+}
