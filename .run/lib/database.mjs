@@ -9,6 +9,7 @@ import { hashSources } from './sources.mjs';
 /**
  * @typedef {object} Database
  * @property {string} url
+ * @property {boolean} hasDemo whether the demo was filled in
  * @property {() => Promise<void>} release
  */
 
@@ -22,30 +23,32 @@ const DEMO_SOURCES = ['fixtures', 'db', 'server/domain', 'server/contract'];
  */
 export async function holdDatabase() {
   const given = process.env['DATABASE_URL'];
-  const database = given === undefined || given === '' ? await holdOwnDatabase() : await namedDatabase(given);
+  const isOwn = given === undefined || given === '';
+  const { url, release } = isOwn ? await holdOwnDatabase() : await namedDatabase(given);
+  const hasDemo = isOwn || process.env['DEMO'] === '1';
   try {
     await alone(inCache('database-preparation.lock'), async () => {
-      await runScript('db/migrate.ts', database.url, 'the database could not be migrated');
+      await runScript('db/migrate.ts', url, 'the database could not be migrated');
       say('database', 'migrated');
-      if (database.url !== given || process.env['DEMO'] === '1') await seedDemo(database.url);
+      if (hasDemo) await seedDemo(url);
     });
-    return database;
+    return { url, hasDemo, release };
   } catch (error) {
-    await database.release();
+    await release();
     throw error;
   }
 }
 
 /**
  * @param {string} url
- * @returns {Promise<Database>}
+ * @returns {Promise<Pick<Database, 'url' | 'release'>>}
  */
 async function namedDatabase(url) {
   await expectAnswer('DATABASE_URL', url);
   return { url, release: () => Promise.resolve() };
 }
 
-/** @returns {Promise<Database>} */
+/** @returns {Promise<Pick<Database, 'url' | 'release'>>} */
 async function holdOwnDatabase() {
   const postgres = await holdPostgres();
   try {

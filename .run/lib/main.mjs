@@ -3,6 +3,7 @@ import { access, constants } from 'node:fs/promises';
 import { delimiter, join } from 'node:path';
 import { bench } from '../bench.mjs';
 import { dev } from '../dev.mjs';
+import { registrar } from '../registrar.mjs';
 import { start } from '../start.mjs';
 import { test } from '../test.mjs';
 import { Stopped, watchSignals } from './children.mjs';
@@ -10,7 +11,7 @@ import { root } from './project.mjs';
 import { Trouble } from './say.mjs';
 
 /** @type {Map<string, (args: readonly string[]) => Promise<number>>} */
-const COMMANDS = new Map(Object.entries({ start, dev, test, bench }));
+const COMMANDS = new Map(Object.entries({ start, dev, test, bench, registrar }));
 
 /**
  * Runs a command and ends the process with its exit code; what the person at the terminal has to mend is said in one line.
