@@ -1,6 +1,7 @@
 import { useEffect, useRef } from 'react';
 import type { ReactNode } from 'react';
-import { Outlet, ScrollRestoration, useLocation, useNavigation } from 'react-router-dom';
+import { Link, Outlet, ScrollRestoration, useLocation, useNavigation } from 'react-router-dom';
+import { paths } from '../lib/paths.ts';
 import { Live } from '../ui/live.tsx';
 import { SiteHeader } from './site-header.tsx';
 
@@ -37,6 +38,11 @@ export function Frame({ children }: { readonly children: ReactNode }) {
         <p className="max-w-measure">
           A date is no sign of soundness, and a fit is no title check or appraisal. Lifting, pressure, lead, asbestos and cracked iron belong to
           competent people under local rules.
+        </p>
+        <p className="no-print mt-3">
+          <Link className="inline-flex min-h-11 items-center" to={paths.developers()}>
+            The interface for programs
+          </Link>
         </p>
       </footer>
     </div>

@@ -4,9 +4,9 @@ import { MarkText } from './decode.ts';
 import { endpoint } from './endpoint.ts';
 
 export const TYPE_VERDICTS = ['as-built', 'later-fits', 'earlier-fits', 'does-not-belong'] as const;
-export const INTERCHANGES = ['both-ways', 'new-for-old'] as const;
+const INTERCHANGES = ['both-ways', 'new-for-old'] as const;
 
-export const CastingRef = z.object({ slug: Slug, number: z.string(), pattern: z.string().nullable() });
+const CastingRef = z.object({ slug: Slug, number: z.string(), pattern: z.string().nullable() });
 
 export const CastingItem = CastingRef.extend({
   id: Id,

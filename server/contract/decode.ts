@@ -18,7 +18,7 @@ export const MarkText = z
   })
   .meta({ examples: ['B?[OD]CB'] });
 
-export const Limits = z
+const Limits = z
   .strictObject({ from: IsoDay.optional(), to: IsoDay.optional() })
   .refine(({ from, to }) => from === undefined || to === undefined || from <= to, { path: ['to'], error: 'The last day is before the first' });
 
@@ -58,7 +58,7 @@ export const CandidateAnswer = z.object({
 export type CandidateAnswer = z.infer<typeof CandidateAnswer>;
 
 /** A stored cipher as an answer names it. */
-export const CipherRef = z.object({ id: Id, slug: Slug, title: z.string(), makerId: Id, version: z.number().int() });
+const CipherRef = z.object({ id: Id, slug: Slug, title: z.string(), makerId: Id, version: z.number().int() });
 
 export const DecodeResult = z.object({
   cipher: CipherRef.nullable(),
@@ -75,7 +75,7 @@ export const DecodeResult = z.object({
 });
 export type DecodeResult = z.infer<typeof DecodeResult>;
 
-export const GLYPH_KINDS = ['sure', 'oneOf', 'unread', 'run'] as const;
+const GLYPH_KINDS = ['sure', 'oneOf', 'unread', 'run'] as const;
 
 export const DecodeAnswer = z.object({
   glyphs: z.array(z.object({ position: z.number().int(), kind: z.enum(GLYPH_KINDS), glyphs: z.array(z.string()) })),

@@ -7,7 +7,9 @@ export const MakerItem = z.object({
   slug: Slug,
   name: z.string(),
   place: z.string().nullable(),
-  isFoundry: z.boolean(),
+  buildsMachines: z.boolean(),
+  /** Has a foundry: of its own works, or casting for others. */
+  poursIron: z.boolean(),
   active: OpenSpan,
   models: z.number().int(),
   castings: z.number().int(),
@@ -16,6 +18,8 @@ export const MakerItem = z.object({
 export type MakerItem = z.infer<typeof MakerItem>;
 
 export const MakerPage = MakerItem.extend({
+  /** How the foundry signed its castings; null for none on record. */
+  foundryMark: z.string().nullable(),
   note: z.string().nullable(),
   works: z.array(z.object({ slug: Slug, name: z.string(), place: z.string().nullable(), provenance: Provenance })),
   modelList: z.array(Named.extend({ kindOfMachine: z.string(), made: OpenSpan })),

@@ -31,7 +31,7 @@ export const Position = z.object({
 });
 export type Position = z.infer<typeof Position>;
 
-export const Anchor = z.object({ number: WholeNumber, built: DateSpan, provenance: Provenance });
+const Anchor = z.object({ number: WholeNumber, built: DateSpan, provenance: Provenance });
 
 export const ModelPage = ModelItem.extend({
   note: z.string().nullable(),
@@ -69,7 +69,7 @@ export const readModelHistory = endpoint({
   answer: History,
 });
 
-export const BUILD_STANDINGS = ['in-range', 'before-first', 'after-last', 'gap', 'unknown-prefix'] as const;
+const BUILD_STANDINGS = ['in-range', 'before-first', 'after-last', 'gap', 'unknown-prefix'] as const;
 
 const RangeHeld = SerialRangeItem.omit({ model: true, series: true, account: true, preferred: true });
 

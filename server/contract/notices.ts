@@ -35,7 +35,7 @@ export const markNoticesRead = endpoint({
   answer: z.object({ unread: z.number().int() }),
 });
 
-export const NoticeChoices = z.object({ byEmail: z.record(NoticeKind, z.boolean()) });
+const NoticeChoices = z.object({ byEmail: z.record(NoticeKind, z.boolean()) });
 export const readNoticeChoices = endpoint({
   method: 'GET',
   path: '/me/notification-choices',

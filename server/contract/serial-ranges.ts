@@ -3,10 +3,10 @@ import { BySlug, DateSpan, History, Id, listAnswer, listQuery, Named, Provenance
 import { endpoint } from './endpoint.ts';
 
 /** How precisely the source gives the days: a range "of 1939" is of year precision. */
-export const DATE_PRECISIONS = ['day', 'month', 'year'] as const;
-export const RANGE_STANDINGS = ['solid', 'interpolated', 'conjectural'] as const;
+const DATE_PRECISIONS = ['day', 'month', 'year'] as const;
+const RANGE_STANDINGS = ['solid', 'interpolated', 'conjectural'] as const;
 /** Four different things a list of numbers may date; only `built` gives a build window. */
-export const RANGE_MEANINGS = ['built', 'dispatched', 'sold', 'model-year'] as const;
+const RANGE_MEANINGS = ['built', 'dispatched', 'sold', 'model-year'] as const;
 
 export const SeriesRef = z.object({
   id: Id,

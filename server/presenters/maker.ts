@@ -11,7 +11,8 @@ export function presentMakerItem({ maker, counts }: CountedMaker): MakerItem {
     slug: maker.slug,
     name: maker.name,
     place: maker.place,
-    isFoundry: maker.poursIron,
+    buildsMachines: maker.buildsMachines,
+    poursIron: maker.poursIron,
     active: presentYears(maker.founded, maker.closed),
     ...counts,
   };
@@ -21,6 +22,7 @@ export function presentMaker(onRecord: MakerOnRecord): MakerPage {
   const { maker, works, models, ciphers, pouredFor, records } = onRecord;
   return {
     ...presentMakerItem(onRecord),
+    foundryMark: maker.foundryMark,
     note: maker.note,
     works: works.map(({ id, slug, name, place }) => ({ slug, name, place, provenance: presentProvenance(records.of(id)) })),
     modelList: models.map((model) => ({ ...presentNamed(model), kindOfMachine: model.machineKind, made: presentOpenSpan(model.made) })),

@@ -18,7 +18,7 @@ const ORDERS = {
   '-dates': { keys: BUILT, direction: 'desc' },
 } as const satisfies Record<string, Order>;
 
-export const SERIAL_RANGE_GRAPH = '[series.[model, works, seriesAccounts], account]';
+const SERIAL_RANGE_GRAPH = '[series.[model, works, seriesAccounts], account]';
 
 export type SerialRangeListing = ListRequest<keyof typeof ORDERS> & {
   readonly q?: string | undefined;

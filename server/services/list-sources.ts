@@ -39,6 +39,6 @@ export async function listSources(request: SourceListing, knex: Knex): Promise<P
   return { ...page, items: page.items.map((source) => ({ source, facts: facts.get(source.id) ?? 0 })) };
 }
 
-export function citationsOf(sourceIds: readonly string[], knex: Knex): Promise<ReadonlyMap<string, number>> {
+function citationsOf(sourceIds: readonly string[], knex: Knex): Promise<ReadonlyMap<string, number>> {
   return countsBy({ table: 'fact_sources', owner: 'sourceId' }, sourceIds, knex);
 }

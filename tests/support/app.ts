@@ -11,7 +11,7 @@ import { keptLog } from './log.ts';
 import type { KeptLog } from './log.ts';
 
 /** The day it is in tests, unless they say otherwise. */
-export const TODAY = '2026-12-01';
+const TODAY = '2026-12-01';
 
 export type TestApp = {
   /** Calls this test's app, which is new for each. */

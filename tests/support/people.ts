@@ -105,28 +105,7 @@ export function usePeople(): TestPeople {
       if (userAgent !== undefined) void agent.set('User-Agent', userAgent);
       return agent;
     },
-    addMember: async ({ displayName, email, role = 'member', verified = true, authenticator = false, demo = false } = {}) => {
-      const id = uuidV7();
-      const member = await Member.query(inHand(knex)).insertAndFetch({
-        id,
-        displayName: displayName ?? `Member ${id.slice(-6)}`,
-        email: email ?? `m${id.slice(-12)}@bench.example`,
-        emailVerifiedAt: verified ? '2026-01-01T00:00:00Z' : null,
-        passwordHash,
-        role,
-        scope: role === 'moderator' ? 'all' : 'none',
-        demo,
-      });
-      if (authenticator) {
-        await Authenticator.query(inHand(knex)).insert({
-          memberId: id,
-          secret: TOTP_SECRET,
-          confirmedAt: '2026-01-01T00:00:00Z',
-          lastStep: '0',
-        });
-      }
-      return withEmail(member);
-    },
+    addMember: (member) => insertMember(inHand(knex), passwordHash, member),
     signedIn: async ({ email }) => {
       const browser = people.browser();
       await browser.post('/api/sign-in').send({ email, password: PASSWORD }).expect(200);
@@ -140,6 +119,29 @@ export function usePeople(): TestPeople {
     actsOf: async (memberId) => AuditRow.query(inHand(knex)).where({ subjectId: memberId }).orderBy(['at', 'id']),
   };
   return people;
+}
+
+/** Writes a member who signs in with the password behind `passwordHash`. */
+export async function insertMember(
+  knex: Knex,
+  passwordHash: string,
+  { displayName, email, role = 'member', verified = true, authenticator = false, demo = false }: NewMember = {},
+): Promise<Member & { email: string }> {
+  const id = uuidV7();
+  const member = await Member.query(knex).insertAndFetch({
+    id,
+    displayName: displayName ?? `Member ${id.slice(-6)}`,
+    email: email ?? `m${id.slice(-12)}@bench.example`,
+    emailVerifiedAt: verified ? '2026-01-01T00:00:00Z' : null,
+    passwordHash,
+    role,
+    scope: role === 'moderator' ? 'all' : 'none',
+    demo,
+  });
+  if (authenticator) {
+    await Authenticator.query(knex).insert({ memberId: id, secret: TOTP_SECRET, confirmedAt: '2026-01-01T00:00:00Z', lastStep: '0' });
+  }
+  return withEmail(member);
 }
 
 const sessions = new WeakMap<supertest.Agent, string>();

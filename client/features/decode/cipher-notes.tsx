@@ -5,7 +5,7 @@ import type { CipherPage } from '#contract/ciphers.ts';
 import { paths } from '../../lib/paths.ts';
 import { sayMoment, sayYears } from '../../lib/say-date.ts';
 import type { Note } from '../../ui/margin-notes.tsx';
-import { SourceLine } from '../../ui/provenance-notes.tsx';
+import { SourceLine } from '../../ui/source-line.tsx';
 import { cipherInHand } from './decode-queries.ts';
 import { fieldWord } from './divisions.ts';
 

@@ -66,7 +66,7 @@ export function MachineForm({ state, change, model, refused }: Props) {
 function ModelField({ state, change, fault }: { readonly state: DecodeState; readonly change: ChangeState; readonly fault: string | null }) {
   const models = useQuery(modelsToChoose());
   const makers = useQuery(makersToChoose());
-  const list = modelsFor(models.data ?? [], state, makers.data?.find(({ slug }) => slug === state.maker)?.isFoundry ?? false);
+  const list = modelsFor(models.data ?? [], state, makers.data?.find(({ slug }) => slug === state.maker)?.buildsMachines ?? true);
   const unknown = models.isSuccess && state.model !== null && !models.data.some(({ slug }) => slug === state.model);
   return (
     <SelectField
@@ -112,8 +112,8 @@ function PositionField({ state, change, model }: { readonly state: DecodeState; 
 }
 
 /** A founder casts for others, so only a maker of machines narrows the models. The one already chosen always stays. */
-function modelsFor(models: readonly ModelItem[], { maker, model }: DecodeState, isFoundry: boolean): readonly ModelItem[] {
-  if (maker === null || isFoundry) return models;
+function modelsFor(models: readonly ModelItem[], { maker, model }: DecodeState, buildsMachines: boolean): readonly ModelItem[] {
+  if (maker === null || !buildsMachines) return models;
   const own = models.filter((one) => one.maker.slug === maker || one.slug === model);
   return own.length === 0 ? models : own;
 }

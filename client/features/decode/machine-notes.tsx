@@ -2,7 +2,7 @@ import type { FactSource } from '#contract/common.ts';
 import type { BuildAnswer, Position } from '#contract/models.ts';
 import { sayMoment } from '../../lib/say-date.ts';
 import type { Note } from '../../ui/margin-notes.tsx';
-import { SourceLine } from '../../ui/provenance-notes.tsx';
+import { SourceLine } from '../../ui/source-line.tsx';
 import { sayNumbers } from './build-words.ts';
 
 export type MachineNotes = {

@@ -5,6 +5,7 @@ import { useContractForm } from '../../lib/use-contract-form.ts';
 import { Button } from '../../ui/button.tsx';
 import { TextField } from '../../ui/text-field.tsx';
 import { ActTrouble } from './act-trouble.tsx';
+import { AddressText } from './address-text.tsx';
 import { FormTrouble } from './form-trouble.tsx';
 import { Outcome } from './outcome.tsx';
 import { PasswordField } from './password-field.tsx';
@@ -22,7 +23,7 @@ export function EmailForm() {
     return (
       <Outcome title="A letter is on its way">
         <p>
-          Follow the link in it within 24 hours. Until then your address stays as it was. It goes to <span className="wrap-anywhere">{asked}</span>, and word
+          Follow the link in it within 24 hours. Until then your address stays as it was. It goes to <AddressText email={asked} />, and word
           of it to the old one.
         </p>
       </Outcome>

@@ -20,19 +20,19 @@ export function AuditTable({ rows, stale, narrow }: Props) {
       stale={stale}
       rowKey={({ id }) => id}
       columns={[
-        { key: 'at', header: 'When', cell: ({ at }) => <time dateTime={at}>{sayInstant(at)}</time> },
+        { key: 'act', header: 'Act', rowHeader: true, cell: ({ act }) => ACT_WORDS[act] },
         {
           key: 'actor',
           header: 'who',
           cell: ({ actor }) => (actor === null ? 'nobody signed in' : <Link to={narrow('actor', actor.id)}>{actor.displayName}</Link>),
         },
-        { key: 'act', header: 'did what', rowHeader: true, cell: ({ act }) => ACT_WORDS[act] },
         {
           key: 'subject',
           header: 'to whom',
           cell: ({ subject, actor }) =>
             subject === null ? '' : subject.id === actor?.id ? 'themself' : <Link to={narrow('subject', subject.id)}>{subject.name}</Link>,
         },
+        { key: 'at', header: 'when', cell: ({ at }) => <time dateTime={at}>{sayInstant(at)}</time> },
         { key: 'detail', header: 'details', cell: (row) => <Details row={row} /> },
       ]}
     />

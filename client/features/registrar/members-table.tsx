@@ -4,6 +4,7 @@ import { paths } from '../../lib/paths.ts';
 import { sayMoment } from '../../lib/say-date.ts';
 import { DataTable } from '../../ui/data-table.tsx';
 import { Icon } from '../../ui/icon.tsx';
+import { AddressText } from '../people/address-text.tsx';
 import { sayRole } from '../people/say-role.ts';
 import { STATE_WORDS } from './member-words.ts';
 
@@ -22,7 +23,9 @@ export function MembersTable({ rows, stale = false }: { readonly rows: readonly 
           cell: ({ id, displayName, email }) => (
             <>
               <Link to={paths.registrarMember(id)}>{displayName}</Link>
-              {email !== null && <span className="block text-[15px] leading-snug font-normal wrap-anywhere text-slag">{email}</span>}
+              {email !== null && <span className="block text-[15px] leading-snug font-normal text-slag">
+                  <AddressText email={email} />
+                </span>}
             </>
           ),
         },

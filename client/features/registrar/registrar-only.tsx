@@ -2,7 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import type { ReactNode } from 'react';
 import type { ViewerCan } from '#contract/people.ts';
 import type { z } from 'zod';
-import { problemOfKind } from '../../lib/problem-error.ts';
+import { NotFoundPage } from '../../app/error-page.tsx';
 import { FailureNote } from '../../ui/failure-note.tsx';
 import { PageTitle } from '../../ui/page-title.tsx';
 import { PartingLine } from '../../ui/parting-line.tsx';
@@ -30,6 +30,6 @@ export function RegistrarOnly({ can, children }: Props) {
       </>
     );
   }
-  if (viewer !== undefined) throw problemOfKind('not-found');
+  if (viewer !== undefined) return <NotFoundPage />;
   return <div className="pt-8">{error === null ? <Skeleton lines={6} label="Loading the page" /> : <FailureNote error={error} onAgain={() => void refetch()} />}</div>;
 }

@@ -1,9 +1,11 @@
 import { useEffect, useState } from 'react';
+import type { ReactNode } from 'react';
 import { useLocation } from 'react-router-dom';
 import type { Me } from '#contract/people.ts';
 import { NoticeChoicesPart } from '../../features/notices/notice-choices-part.tsx';
 import { AccountSection } from '../../features/people/account-section.tsx';
 import { SecondFactorOwed } from '../../features/people/act-trouble.tsx';
+import { AddressText } from '../../features/people/address-text.tsx';
 import { AuthenticatorPart } from '../../features/people/authenticator-part.tsx';
 import { CloseForm } from '../../features/people/close-form.tsx';
 import { EmailForm } from '../../features/people/email-form.tsx';
@@ -42,7 +44,9 @@ function Account({ viewer }: { readonly viewer: Me }) {
           <InlineStep label="Change the name">{(close) => <NameForm viewer={viewer} onDone={close} />}</InlineStep>
         </AccountSection>
         <AccountSection id="address" heading="E-mail address">
-          <Fact>{viewer.email}</Fact>
+          <Fact>
+            <AddressText email={viewer.email} />
+          </Fact>
           <InlineStep label="Change the address">{() => <EmailForm />}</InlineStep>
         </AccountSection>
         <AccountSection id="password" heading="Password">
@@ -77,7 +81,7 @@ function Account({ viewer }: { readonly viewer: Me }) {
   );
 }
 
-function Fact({ children }: { readonly children: string }) {
+function Fact({ children }: { readonly children: ReactNode }) {
   return <p className="mb-3 text-[19px] wrap-anywhere">{children}</p>;
 }
 

@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { Link } from 'react-router-dom';
 import { forgotPassword } from '#contract/accounts.ts';
+import { AddressText } from '../../features/people/address-text.tsx';
 import { FormPage } from '../../features/people/form-page.tsx';
 import { FormTrouble } from '../../features/people/form-trouble.tsx';
 import { Outcome } from '../../features/people/outcome.tsx';
@@ -39,7 +40,7 @@ export function Component() {
       ) : (
         <Outcome title="A letter is on its way">
           <p>
-            We wrote to <span className="font-semibold wrap-anywhere">{sentTo}</span>. The link in the letter works once, within an hour.
+            We wrote to <AddressText email={sentTo} />. The link in the letter works once, within an hour.
           </p>
           <p>Nothing there after a few minutes? Look among unwanted letters, then ask once more.</p>
         </Outcome>

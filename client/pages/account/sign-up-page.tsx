@@ -1,6 +1,7 @@
 import { useState } from 'react';
 import { Link } from 'react-router-dom';
 import { signUp } from '#contract/accounts.ts';
+import { AddressText } from '../../features/people/address-text.tsx';
 import { FormPage } from '../../features/people/form-page.tsx';
 import { FormTrouble } from '../../features/people/form-trouble.tsx';
 import { NEW_PASSWORD_HINT } from '../../features/people/new-password-hint.ts';
@@ -46,7 +47,7 @@ export function Component() {
       ) : (
         <Outcome title="A letter is on its way" action={<ButtonLink to={paths.signIn()}>Go to sign in</ButtonLink>}>
           <p>
-            We wrote to <span className="font-semibold wrap-anywhere">{sentTo}</span>. Follow the link in the letter within 24 hours; then you can sign in.
+            We wrote to <AddressText email={sentTo} />. Follow the link in the letter within 24 hours; then you can sign in.
           </p>
           <p>Nothing there after a few minutes? Look among unwanted letters, or open the account again: a new link takes the old one’s place.</p>
         </Outcome>

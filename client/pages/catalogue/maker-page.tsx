@@ -29,7 +29,7 @@ export function Component() {
   const notes = pageNotes([
     {
       block: 'what',
-      facts: ['place', 'founded', 'pouredFor', 'note'].map((field) => ({
+      facts: ['place', 'founded', 'foundryMark', 'pouredFor', 'note'].map((field) => ({
         key: field,
         provenance: provenanceOfField(maker.provenance, field),
       })),
@@ -135,16 +135,17 @@ export function Component() {
   );
 }
 
-function sayTrade({ isFoundry, modelList, active }: MakerPage): string {
-  const trade = modelList.length === 0 ? 'Foundry' : isFoundry ? 'Maker with its own foundry' : 'Maker';
+function sayTrade({ buildsMachines, poursIron, active }: MakerPage): string {
+  const trade = !buildsMachines ? 'Foundry' : poursIron ? 'Maker with its own foundry' : 'Maker';
   return active.from === null && active.to === null ? trade : `${trade}, ${sayYears(active)}`;
 }
 
 function factsOf(maker: MakerPage, numbersOf: (key: string) => readonly number[]): Fact[] {
-  const { place, active, pouredFor, note } = maker;
+  const { place, active, foundryMark, pouredFor, note } = maker;
   return [
     { name: 'Place', value: place ?? 'not on record', notes: numbersOf('place') },
     { name: 'Years', value: sayYears(active), notes: numbersOf('founded') },
+    ...(foundryMark === null ? [] : [{ name: 'Foundry mark', value: <span className="font-mono">{foundryMark}</span>, notes: numbersOf('foundryMark') }]),
     ...(pouredFor.length === 0
       ? []
       : [

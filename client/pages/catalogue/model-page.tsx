@@ -13,7 +13,7 @@ import { NoteRef } from '../../ui/margin-notes.tsx';
 import { Block, PageGrid } from '../../ui/page-grid.tsx';
 import { PageTitle } from '../../ui/page-title.tsx';
 import { PartingLine } from '../../ui/parting-line.tsx';
-import { SourceLine } from '../../ui/provenance-notes.tsx';
+import { SourceLine } from '../../ui/source-line.tsx';
 import { TimeRule } from '../../ui/time-rule.tsx';
 import { ModelChecklist } from './model-checklist.tsx';
 import { ModelSerials, serialFact } from './model-serials.tsx';

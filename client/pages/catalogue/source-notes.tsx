@@ -3,7 +3,7 @@ import { Link } from 'react-router-dom';
 import { paths } from '../../lib/paths.ts';
 import { sayMoment } from '../../lib/say-date.ts';
 import { MarginNotes } from '../../ui/margin-notes.tsx';
-import { SourceLine } from '../../ui/provenance-notes.tsx';
+import { SourceLine } from '../../ui/source-line.tsx';
 import { bySource } from './page-notes.ts';
 import type { SourceNote } from './page-notes.ts';
 

@@ -2,6 +2,7 @@ import type { QueryClient } from '@tanstack/react-query';
 import { useSuspenseQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import type { LoaderFunction } from 'react-router-dom';
+import { AddressText } from '../../features/people/address-text.tsx';
 import { paths } from '../../lib/paths.ts';
 import { sayInstant } from '../../lib/say-instant.ts';
 import { Button } from '../../ui/button.tsx';
@@ -36,7 +37,7 @@ export function Component() {
           empty={<EmptyState title="No letters yet">Open an account, or ask for a new password: the letter comes here.</EmptyState>}
           columns={[
             { key: 'subject', header: 'Subject', rowHeader: true, cell: ({ id, subject }) => <Link to={paths.letter(id)}>{subject}</Link> },
-            { key: 'to', header: 'to', cell: ({ to }) => <span className="wrap-anywhere">{to}</span> },
+            { key: 'to', header: 'to', cell: ({ to }) => <AddressText email={to} /> },
             { key: 'at', header: 'came', cell: ({ at }) => sayInstant(at) },
           ]}
         />

@@ -2,7 +2,9 @@ import { useMutation, useQuery } from '@tanstack/react-query';
 import { Link, useParams } from 'react-router-dom';
 import { endMemberSessions } from '#contract/admin.ts';
 import type { MemberPage } from '#contract/admin.ts';
+import { NotFoundPage } from '../../app/error-page.tsx';
 import { ActTrouble, SecondFactorOwed } from '../../features/people/act-trouble.tsx';
+import { AddressText } from '../../features/people/address-text.tsx';
 import { InlineStep } from '../../features/people/inline-step.tsx';
 import { sayRole } from '../../features/people/say-role.ts';
 import { MemberState } from '../../features/registrar/members-table.tsx';
@@ -38,7 +40,7 @@ function MemberOf({ id }: { readonly id: string }) {
   const { data: member, error, refetch } = useQuery(memberPage(id));
   if (member !== undefined) return <Member member={member} />;
   // An id that is none is nothing at an address, like one nobody has.
-  if (error instanceof ProblemError && (error.kind === 'not-found' || error.kind === 'invalid')) throw error;
+  if (error instanceof ProblemError && (error.kind === 'not-found' || error.kind === 'invalid')) return <NotFoundPage />;
   if (error instanceof ProblemError && error.kind === 'second-factor-owed') return <SecondFactorOwed />;
   return <div className="pt-8">{error === null ? <Skeleton lines={6} label="Loading the member" /> : <FailureNote error={error} onAgain={() => void refetch()} />}</div>;
 }
@@ -95,7 +97,7 @@ function Facts({ member }: { readonly member: MemberPage }) {
   return (
     <FactList
       facts={[
-        { name: 'Address', value: <span className="wrap-anywhere">{email ?? 'none'}</span> },
+        { name: 'Address', value: email === null ? 'none' : <AddressText email={email} /> },
         { name: 'State', value: <MemberState state={state} /> },
         { name: 'Second factor', value: secondFactor ? 'yes' : 'no' },
         { name: 'Joined', value: sayMoment(joinedAt) },

@@ -36,7 +36,7 @@ export async function listMembers(viewer: Viewer, request: MemberListing, knex: 
       request,
       filter: (query) => {
         const { q, role, state } = request;
-        void query.where((account) => account.whereNotNull('email').orWhereNotNull('closedAt'));
+        void query.where((account) => void account.whereNotNull('email').orWhereNotNull('closedAt'));
         if (role) void query.where({ role });
         if (state) OF_STATE[state](query);
         if (q) matchText(query, ['displayName', 'email'], q);

@@ -1,12 +1,12 @@
 import { render, screen } from '@testing-library/react';
 import { MemoryRouter } from 'react-router-dom';
 import { describe, expect, it } from 'vitest';
-import type { FactSource, Provenance } from '#contract/common.ts';
+import type { FactSource } from '#contract/common.ts';
 import { parseReading } from '#domain/marks/reading.ts';
 import { MarkPlate, readingOf } from '#client/ui/mark-plate.tsx';
 import { Block } from '#client/ui/page-grid.tsx';
 import { NoteRef } from '#client/ui/margin-notes.tsx';
-import { provenanceNotes } from '#client/ui/provenance-notes.tsx';
+import { SourceLine } from '#client/ui/source-line.tsx';
 import { TimeRule } from '#client/ui/time-rule.tsx';
 import { dayOf } from '#domain/dates/day.ts';
 
@@ -34,35 +34,32 @@ describe('readingOf', () => {
   });
 });
 
-const source = (slug: string, locator: string | null = null): FactSource => ({ field: null, source: { slug, kind: 'book', title: `Book ${slug}` }, locator, note: null });
-const entered = (...sources: FactSource[]): Provenance => ({ version: 2, enteredBy: 'Two Valleys club', enteredAt: '2026-03-04T10:00:00Z', sources });
+const source = (note: string | null): FactSource => ({ field: null, source: { slug: 'a', kind: 'book', title: 'Book a' }, locator: 'page 3', note });
 
-describe('provenanceNotes', () => {
-  it('numbers each source once, however many facts it stands behind', () => {
-    const { notes, numbersOf } = provenanceNotes(
-      [
-        { key: 'made', provenance: entered(source('a', 'page 3')) },
-        { key: 'poured', provenance: entered(source('b'), source('a', 'page 3')) },
-        { key: 'tell', provenance: entered(source('a', 'page 9')) },
-      ],
-      4,
-    );
-    expect(notes.map(({ number }) => number)).toEqual([4, 5, 6]);
-    expect([numbersOf('made'), numbersOf('poured'), numbersOf('tell'), numbersOf('other')]).toEqual([[4], [5, 4], [6], []]);
+describe('SourceLine', () => {
+  it('names the source, where in it, and the remark', () => {
+    render(<SourceLine source={source('Seen as a photo.')} />, { wrapper: MemoryRouter });
+    expect(screen.getByRole('link', { name: 'Book a' }).getAttribute('href')).toBe('/sources/a');
+    expect(document.body.textContent).toContain('Book a, page 3. Seen as a photo.');
   });
-  it('stands in the margin with who entered it, and says where there is no source', () => {
-    const { notes, numbersOf } = provenanceNotes([{ key: 'a', provenance: entered(source('a', 'page 3')) }, { key: 'b', provenance: entered() }]);
+  it('says where there is no source', () => {
+    render(<SourceLine source={null} />, { wrapper: MemoryRouter });
+    expect(document.body.textContent).toContain('No source on record.');
+  });
+});
+
+describe('Block', () => {
+  it('puts numbered notes beside what they stand behind', () => {
     render(
       <MemoryRouter>
-        <Block heading="What it is" notes={notes}>
+        <Block heading="What it is" notes={[{ number: 4, body: 'Book a, page 3.' }]}>
           Made 1938
-          <NoteRef numbers={numbersOf('a')} />
+          <NoteRef numbers={[4]} />
         </Block>
       </MemoryRouter>,
     );
-    expect(screen.getByRole('link', { name: 'Note 1' }).getAttribute('href')).toBe('#note-1');
-    expect(document.getElementById('note-1')?.textContent).toContain('Book a, page 3.Entered by Two Valleys club, 4 Mar 2026. Version 2.');
-    expect(document.getElementById('note-2')?.textContent).toContain('No source on record.');
+    expect(screen.getByRole('link', { name: 'Note 4' }).getAttribute('href')).toBe('#note-4');
+    expect(document.getElementById('note-4')?.textContent).toContain('Book a, page 3.');
   });
 });
 

@@ -46,7 +46,7 @@ describe('changing a role', () => {
       act: 'role.changed',
       actorId: registrar.id,
       detail: { from: 'member', to: 'moderator', moderates: ['brackwater-tractor-works'] },
-      requestId: answer.headers['x-request-id'] as unknown,
+      requestId: answer.headers['x-request-id'],
     });
   });
 

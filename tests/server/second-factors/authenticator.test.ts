@@ -19,8 +19,8 @@ async function start(browser: ReturnType<typeof people.browser>) {
 }
 
 async function factorsOf(browser: ReturnType<typeof people.browser>) {
-  const { body } = await browser.get('/api/me').expect(200);
-  return z.object({ me: z.object({ secondFactors: z.unknown(), secondFactorOwed: z.boolean(), can: z.unknown() }) }).parse(body).me;
+  const answer = await browser.get('/api/me').expect(200);
+  return z.object({ me: z.object({ secondFactors: z.unknown(), secondFactorOwed: z.boolean(), can: z.unknown() }) }).parse(answer.body).me;
 }
 
 describe('adding an authenticator', () => {
@@ -38,8 +38,8 @@ describe('adding an authenticator', () => {
   test('counts for nothing before a first code', async () => {
     const member = await people.addMember();
     await start(await people.signedIn(member));
-    const { body } = await people.browser().post('/api/sign-in').send({ email: member.email, password: PASSWORD }).expect(200);
-    expect(body).toMatchObject({ state: 'signed-in' });
+    const answer = await people.browser().post('/api/sign-in').send({ email: member.email, password: PASSWORD }).expect(200);
+    expect(answer.body).toMatchObject({ state: 'signed-in' });
   });
 
   test('with a first code gives recovery codes, a new session, and ends the others', async () => {
@@ -133,8 +133,8 @@ describe('the second step of signing in', () => {
     const other = await people.signedIn(member);
     const code = await codeOfNow(people.knex);
     const before = sessionOf(browser);
-    const { body } = await browser.post('/api/sign-in/second-factor').send({ way: 'authenticator', code }).expect(200);
-    expect(body).toMatchObject({ state: 'signed-in', me: { id: member.id } });
+    const answer = await browser.post('/api/sign-in/second-factor').send({ way: 'authenticator', code }).expect(200);
+    expect(answer.body).toMatchObject({ state: 'signed-in', me: { id: member.id } });
     expect(sessionOf(browser)).not.toBe(before);
     const replay = await problemOf(other.post('/api/sign-in/second-factor').send({ way: 'authenticator', code }), 403);
     expect(pathsOf(replay)).toEqual(['code']);
@@ -201,9 +201,9 @@ describe('recovery codes', () => {
   test('sign in once each, however they are typed, and the member is told', async () => {
     const { member, recoveryCodes } = await withCodes();
     const [code = ''] = recoveryCodes;
-    const { status, body } = await give(member, ` ${code.toLowerCase().replaceAll('-', ' ')} `);
-    expect(status).toBe(200);
-    expect(body).toMatchObject({ state: 'signed-in', me: { secondFactors: { recoveryCodesLeft: 9 } } });
+    const answer = await give(member, ` ${code.toLowerCase().replaceAll('-', ' ')} `);
+    expect(answer.status).toBe(200);
+    expect(answer.body).toMatchObject({ state: 'signed-in', me: { secondFactors: { recoveryCodesLeft: 9 } } });
     expect((await give(member, code)).status).toBe(403);
     expect((await people.lettersTo(member.email))[0]).toMatchObject({ data: { change: 'recovery-code-used' } });
     expect((await people.actsOf(member.id)).map(({ act }) => act)).toContain('recovery-code.used');

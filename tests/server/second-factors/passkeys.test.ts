@@ -158,9 +158,9 @@ describe('signing in with a passkey', () => {
     const { member, device } = await withPasskey({ role: 'registrar' });
     const browser = people.browser();
     expect(await signInOptions(browser)).toMatchObject({ rpId: '127.0.0.1', userVerification: 'required', allowCredentials: [] });
-    const { status, body } = await signIn(browser, device);
-    expect(status).toBe(200);
-    expect(body).toMatchObject({ state: 'signed-in', me: { id: member.id, secondFactorOwed: false, can: { seeMembers: true } } });
+    const answer = await signIn(browser, device);
+    expect(answer.status).toBe(200);
+    expect(answer.body).toMatchObject({ state: 'signed-in', me: { id: member.id, secondFactorOwed: false, can: { seeMembers: true } } });
     await browser.get('/api/admin/members').expect(200);
     expect(await Passkey.query(people.knex).findOne({ memberId: member.id })).toMatchObject({ counter: '2', lastUsedAt: expect.any(String) as unknown });
     expect((await people.actsOf(member.id)).at(-1)).toMatchObject({ act: 'session.started', detail: { strength: 'second-factor' } });

@@ -222,6 +222,7 @@ export const arbitraryCase: fc.Arbitrary<Case> = arbitraryCipher
       day: fc.integer({ min: first, max: last }),
       asOf: fc.constant(last),
       pick: fc.nat(),
+      aimAtException: fc.boolean(),
       damage: fc.array(fc.constantFrom<Damage[]>('keep', 'keep', 'keep', 'unread', 'oneOf', 'wrong'), { minLength: 32, maxLength: 32 }),
       hurt: fc.boolean(),
       lies: fc.integer({ min: 0, max: 9 }).map((die) => die === 0),
@@ -239,11 +240,14 @@ export const arbitraryCase: fc.Arbitrary<Case> = arbitraryCipher
     });
   })
   .map((drawn): Case | null => {
-    const spelled = spellingsOn(drawn.day, drawn.definition);
-    const texts = spelled[drawn.pick % Math.max(1, spelled.length)];
+    const { definition, asOf, limits, lookAlikes } = drawn;
+    const [exception] = drawn.aimAtException ? (definition.exceptions ?? []) : [];
+    const day = exception === undefined ? drawn.day : Math.min(asOf, Math.max(dayNumber(definition.usedFrom), dayNumber(exception.from)));
+    const spelled = spellingsOn(day, definition);
+    // What exceptions add comes last.
+    const texts = exception === undefined ? spelled[drawn.pick % Math.max(1, spelled.length)] : spelled.at(-1);
     if (texts === undefined) return null;
     const { mark, honest } = damaged(texts, drawn);
-    const { definition, day, asOf, limits, lookAlikes } = drawn;
     return { definition, day, texts, mark, honest, asOf, limits, lookAlikes };
   })
   .filter((drawn): drawn is Case => drawn !== null);

@@ -1,14 +1,12 @@
 import type { Knex } from 'knex';
 import { v7 as uuidv7 } from 'uuid';
 import type { CipherDefinition } from '#domain/ciphers/definition.ts';
-import { Casting } from '#db/models/casting.ts';
 import { Cipher } from '#db/models/cipher.ts';
 import { CipherVersion } from '#db/models/cipher-version.ts';
 import { Fact } from '#db/models/fact.ts';
 import { FactVersion } from '#db/models/fact-version.ts';
 import { Maker } from '#db/models/maker.ts';
 import { Member } from '#db/models/member.ts';
-import { PartType } from '#db/models/part-type.ts';
 import type { FactKind } from '#db/vocabulary.ts';
 
 /**
@@ -41,38 +39,6 @@ export async function addMaker(given: Partial<Maker>, trx: Knex): Promise<Maker>
     closed: null,
     note: null,
     ...given,
-  });
-}
-
-export async function addPartType(given: Partial<PartType>, trx: Knex): Promise<PartType> {
-  const place = next();
-  const id = await addFact('part-type', trx);
-  return PartType.query(trx).insertAndFetch({
-    id,
-    slug: `test-part-type-${place}`,
-    name: `Test part type ${place}`,
-    note: null,
-    caution: null,
-    ...given,
-  });
-}
-
-export async function addCasting(given: Partial<Casting>, trx: Knex): Promise<Casting> {
-  const place = next();
-  const makerId = given.makerId ?? (await addMaker({}, trx)).id;
-  const partTypeId = given.partTypeId ?? (await addPartType({}, trx)).id;
-  const id = await addFact('casting', trx);
-  return Casting.query(trx).insertAndFetch({
-    id,
-    slug: `test-casting-${place}`,
-    number: `T${place}`,
-    pattern: null,
-    pouredById: null,
-    made: null,
-    note: null,
-    ...given,
-    makerId,
-    partTypeId,
   });
 }
 

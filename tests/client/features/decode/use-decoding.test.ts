@@ -5,7 +5,7 @@ import { requestOf } from '#client/features/decode/use-decoding.ts';
 import { CipherItem } from '#contract/ciphers.ts';
 import { MakerItem } from '#contract/makers.ts';
 
-const MAKER = MakerItem.parse({ id: '018d5bbd-2920-72c2-a4c4-26dc0063c791', slug: 'works', name: 'Works', place: null, isFoundry: false, active: { from: null, to: null }, models: 0, castings: 0, ciphers: 1 });
+const MAKER = MakerItem.parse({ id: '018d5bbd-2920-72c2-a4c4-26dc0063c791', slug: 'works', name: 'Works', place: null, buildsMachines: true, poursIron: false, active: { from: null, to: null }, models: 0, castings: 0, ciphers: 1 });
 const CIPHER = CipherItem.parse({ id: '018d994d-f6c0-759e-9388-3e9cb54a1357', slug: 'key', title: 'Key', maker: { slug: 'works', name: 'Works' }, foundry: null, kindOfMachine: null, used: { from: null, to: null }, version: 1 });
 const SAID = { ...NOTHING_SAID, mark: 'BBOCB' };
 
