@@ -39,7 +39,7 @@ export type Amended = { readonly text: string; readonly caret: number };
 
 /**
  * Keeps brackets whole while a mark is typed. `[` opens a bracket and closes it behind the caret, round the glyph it replaces if
- * there was one; `]` steps over the one that is there; rubbing out either end of a bracket takes the whole bracket. Letters go to capitals.
+ * there was one, and does nothing inside another; `]` steps over the one that is there; rubbing out either end of a bracket takes the whole bracket. Letters go to capitals.
  *
  * `typed` is the text as the box has it now with the caret at `caret`; `before` the text and the selection it had.
  */
@@ -48,6 +48,8 @@ export function amend(before: { readonly text: string; readonly start: number; r
   const inserted = text.slice(before.start, caret);
   const isInsertion = text.length - inserted.length + (before.end - before.start) === before.text.length && inserted.length > 0;
   if (isInsertion && inserted === '[') {
+    // The notation has no bracket inside a bracket.
+    if (caretPlace(before.text, readTyped(before.text), before.start).kind === 'inside') return { text: before.text, caret: before.start };
     const replaced = before.text.slice(before.start, before.end);
     const kept = [...replaced].filter((character) => isGlyph(foldCase(character))).join('');
     return { text: `${text.slice(0, caret)}${kept}]${text.slice(caret)}`, caret: caret + kept.length };

@@ -39,7 +39,7 @@ export function NoticeList({ notices, busy, onRead }: Props) {
           </div>
           {!notice.read && (
             <Button disabled={busy} onClick={() => onRead(notice.id)}>
-              Mark read<span className="sr-only">: {notice.title}</span>
+              Mark read<span className="sr-only"> {notice.title}</span>
             </Button>
           )}
         </li>

@@ -58,6 +58,7 @@ describe('amend', () => {
     ['BB|', 'o', 'BBO|'],
     ['B|CB', '[', 'B[|]CB'],
     ['B[|]CB', 'O', 'B[O|]CB'],
+    ['B[O|]CB', '[', 'B[O|]CB'],
     ['B[OD|]CB', ']', 'B[OD]|CB'],
     ['B<O>CB', '[', 'B[O|]CB'],
     ['B<?>CB', '[', 'B[|]CB'],
@@ -90,6 +91,7 @@ describe('amend', () => {
         const closed = box.match(/\]/g)?.length ?? 0;
         expect(closed).toBeGreaterThanOrEqual(opened);
       }),
+      { examples: [[['[', '[', ']', ']', 'rub']]] },
     );
   });
 });
