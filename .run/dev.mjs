@@ -44,7 +44,7 @@ export async function dev() {
 async function serve(address, settings) {
   const port = (await isPortFree(PAGES_PORT, '127.0.0.1')) ? PAGES_PORT : await freePort();
   // Visitors come to Vite's server, so that is where letters lead.
-  const origin = process.env['PUBLIC_ORIGIN'] || `http://127.0.0.1:${port}`;
+  const origin = process.env['PUBLIC_ORIGIN'] || `http://localhost:${port}`;
   const env = { ...process.env, ...address.env, ...settings, PUBLIC_ORIGIN: origin, POURBOOK_API_ORIGIN: address.origin };
   const server = startChild(packageBin('tsx'), ['watch', '--clear-screen=false', 'server/main.ts'], { inherit: true, env });
   const pages = startChild(packageBin('vite'), ['--clearScreen', 'false', '--port', String(port), '--strictPort'], { inherit: true, env });

@@ -84,7 +84,7 @@ export function parseConfig(environment: NodeJS.ProcessEnv): Config {
     host: data.HOST,
     port: data.PORT,
     databaseUrl: data.DATABASE_URL,
-    publicOrigin: data.PUBLIC_ORIGIN ?? `http://${data.HOST.includes(':') ? `[${data.HOST}]` : data.HOST}:${data.PORT}`,
+    publicOrigin: data.PUBLIC_ORIGIN ?? `http://${nameOfHost(data.HOST)}:${data.PORT}`,
     logLevel: data.LOG_LEVEL,
     trustProxy: data.TRUST_PROXY,
     clientDirectory: data.CLIENT_DIR,
@@ -113,6 +113,12 @@ function faultsInProduction(config: Config, given: z.output<typeof Environment>)
   if (given.MAIL_FROM === undefined) faults.push('MAIL_FROM: missing in production; say the address letters come from');
   if (given.LOCAL_POST_DIR !== undefined) faults.push('LOCAL_POST_DIR: must not be set in production, where letters are nobody else’s to read');
   return faults;
+}
+
+/** Loopback by its name, because a browser makes passkeys for names only, never for an address in figures. */
+function nameOfHost(host: string): string {
+  if (host === '127.0.0.1') return 'localhost';
+  return host.includes(':') ? `[${host}]` : host;
 }
 
 function isDatabaseUrl(text: string): boolean {

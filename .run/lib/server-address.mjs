@@ -22,7 +22,8 @@ export async function freeServerAddress() {
         'stop that one, or choose another with PORT=…',
     );
   }
-  const reachable = host === '0.0.0.0' || host === '::' ? '127.0.0.1' : host;
+  // By name where it is loopback: browsers make passkeys for names only.
+  const reachable = ['0.0.0.0', '::', '127.0.0.1'].includes(host) ? 'localhost' : host;
   return { origin: `http://${reachable.includes(':') ? `[${reachable}]` : reachable}:${port}`, env: { HOST: host, PORT: port } };
 }
 

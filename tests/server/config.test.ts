@@ -20,7 +20,7 @@ describe('settings', () => {
       host: '127.0.0.1',
       port: 5080,
       databaseUrl: DATABASE_URL,
-      publicOrigin: 'http://127.0.0.1:5080',
+      publicOrigin: 'http://localhost:5080',
       logLevel: 'info',
       trustProxy: [],
       mail: { url: 'smtp://127.0.0.1:2525', from: 'post@pourbook.invalid' },
