@@ -162,7 +162,8 @@ describe.each([
     } finally {
       await visitor.end();
     }
-  });
+    // Axe goes through a dozen pages.
+  }, 180_000);
 });
 
 /** Buttons, boxes and links of the header lower than 44 px. */

@@ -5,5 +5,5 @@ type Props = Pick<ComponentProps<typeof TextField>, 'id' | 'name' | 'label' | 'h
 
 /** Six digits of the moment; a phone offers them by itself. */
 export function CodeField(field: Props) {
-  return <TextField {...field} mono inputMode="numeric" autoComplete="one-time-code" spellCheck={false} className="max-w-[260px]" />;
+  return <TextField {...field} mono inputMode="numeric" autoComplete="one-time-code" spellCheck={false} className="max-w-[340px]" />;
 }

@@ -37,7 +37,7 @@ export function Component() {
     <FormPage
       title="Sign in"
       aside={
-        ways === null && (
+        ways === null ? (
           <>
             <p>
               <Link to={paths.passwordForgotten()}>You forgot the password</Link>
@@ -46,7 +46,7 @@ export function Component() {
               You have no account? <Link to={paths.signUp()}>Open one</Link>. Decoding and the catalogue need none.
             </p>
           </>
-        )
+        ) : undefined
       }
     >
       {ways === null ? <FirstStep onAnswer={onAnswer} /> : <SecondStep ways={ways} onAnswer={onAnswer} onStartAgain={() => setWays(null)} />}

@@ -8,7 +8,7 @@ import { me } from '../../features/people/people-queries.ts';
 import { SignedInOnly } from '../../features/people/signed-in-only.tsx';
 import { call } from '../../lib/call.ts';
 import { paths } from '../../lib/paths.ts';
-import { sayCount } from '../../lib/say-number.ts';
+import { capital, sayCount } from '../../lib/say-number.ts';
 import { Button, ButtonLink } from '../../ui/button.tsx';
 import { EmptyState } from '../../ui/empty-state.tsx';
 import { FailureNote } from '../../ui/failure-note.tsx';
@@ -35,7 +35,7 @@ function Notices({ viewer }: { readonly viewer: Me }) {
   const notices = data?.pages.flatMap(({ items }) => items);
   return (
     <>
-      <PageTitle title="Notices" below={viewer.unreadNotices === 0 ? 'All read.' : `${sayCount(viewer.unreadNotices)} not read yet.`}>
+      <PageTitle title="Notices" below={viewer.unreadNotices === 0 ? 'All read.' : `${capital(sayCount(viewer.unreadNotices))} not read yet.`}>
         Notices
       </PageTitle>
       <PartingLine />
