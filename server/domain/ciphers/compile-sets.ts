@@ -13,7 +13,7 @@ export type CheckedSet =
   | { readonly kind: 'digits'; readonly digits: CompiledDigits }
   | { readonly kind: 'values'; readonly values: CheckedValues };
 
-export const NUMERALS = 'numerals';
+const NUMERALS = 'numerals';
 
 const DIGITS = '0123456789';
 

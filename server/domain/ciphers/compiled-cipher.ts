@@ -114,7 +114,3 @@ export type CompiledException = {
 };
 
 export const NO_NUMBERS: Numbers = { values: [], every: 0 };
-
-export function isSymbolField(field: CompiledField): field is DigitsField | ValuesField {
-  return field.kind !== 'literal';
-}

@@ -15,7 +15,7 @@ export function daysInUse(cipher: CompiledCipher, asOf: Day): DaySpan | null {
 }
 
 /** The limits as a span; `null` where they end before they start or lie outside every cipher's days. */
-export function spanOfLimits(limits: DayLimits): DaySpan | null {
+function spanOfLimits(limits: DayLimits): DaySpan | null {
   return daySpan(Math.max(limits.from ?? FIRST_POSSIBLE_DAY, FIRST_POSSIBLE_DAY), Math.min(limits.to ?? LAST_POSSIBLE_DAY, LAST_POSSIBLE_DAY));
 }
 

@@ -13,7 +13,7 @@ import { reasonsFor } from './reasons.ts';
 import { uncertainPositions, whatSettles, whichGapsSettle, type Question } from './settle.ts';
 import type { SpanTable } from './span-table.ts';
 import { likeliestSpelling } from './spelling.ts';
-import { workOut, type Working } from './work-out.ts';
+import { STEPS_ALLOWED, workOut, type Working } from './work-out.ts';
 
 export type DecodeOptions = {
   /** The day up to which a cipher still in use is looked at. */
@@ -25,7 +25,7 @@ export type DecodeOptions = {
 };
 
 /** At most so many candidates are listed; `Decoding.total` counts them all. */
-export const CANDIDATES_LISTED = 200;
+const CANDIDATES_LISTED = 200;
 
 /** What would settle the reading is worked out only where that costs no more than this. */
 const STEPS_TO_SETTLE = 300_000;
@@ -68,7 +68,7 @@ export function decode(reading: Reading, cipher: CompiledCipher, options: Decode
 
   const spans = working.found?.spans ?? null;
   const total = spans?.size ?? 0;
-  const weight = spans?.totalWeight() ?? 0;
+  const weight = working.found?.weight ?? 0;
   const candidates = spans === null ? [] : candidatesOf(working, spans, weight, cipher);
   const left = whatIsLeft({ rows, breaks: reading.breaks, cipher, days }, working, spans);
   return {
@@ -94,8 +94,9 @@ export function likelihoodOf(
 ): { readonly likelihood: number; readonly steps: number } {
   const days = daysInQuestion(cipher, options.asOf, options.limits ?? {});
   if (days === null || !canDate(cipher, days)) return { likelihood: 0, steps: 0 };
-  const { found, steps } = workOut(rowsOf(reading, cipher, options.lookAlikes ?? false), reading.breaks, cipher, days);
-  return { likelihood: found === null || found.givenUp ? 0 : found.spans.totalWeight() / daysIn(days), steps };
+  const rows = rowsOf(reading, cipher, options.lookAlikes ?? false);
+  const { found, steps } = workOut(rows, reading.breaks, cipher, days, { steps: STEPS_ALLOWED, keepSpans: false });
+  return { likelihood: found === null || found.givenUp ? 0 : found.weight / daysIn(days), steps };
 }
 
 function candidatesOf(working: Working, spans: SpanTable, weight: number, cipher: CompiledCipher): readonly Candidate[] {

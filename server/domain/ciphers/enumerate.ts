@@ -8,10 +8,19 @@ import type { Choice, Link } from './links.ts';
 import { SpanTable } from './span-table.ts';
 
 export type Enumeration = {
+  /** Empty where only the weight was asked for. */
   readonly spans: SpanTable;
+  /** Days times likelihood, over all spans. */
+  readonly weight: number;
   readonly steps: number;
   /** The work went over the limit and was given up; `spans` is then incomplete. */
   readonly givenUp: boolean;
+};
+
+export type Allowed = {
+  readonly steps: number;
+  /** `false`: only the weight is wanted, and the spans need not be kept. */
+  readonly keepSpans: boolean;
 };
 
 /** Coarse to fine, so that a year that can't be cuts off its months and days. */
@@ -29,9 +38,9 @@ export function enumerate(
   lattice: Lattice,
   links: readonly Link[],
   window: DaySpan,
-  stepsAllowed: number,
+  allowed: Allowed,
 ): Enumeration {
-  return new Enumerator(cipher, lattice, links, window, stepsAllowed).run();
+  return new Enumerator(cipher, lattice, links, window, allowed).run();
 }
 
 /** The choices, one a link, that a number kept with a span stands for. */
@@ -51,7 +60,7 @@ class Enumerator {
   readonly #cipher: CompiledCipher;
   readonly #lattice: Lattice;
   readonly #window: DaySpan;
-  readonly #stepsAllowed: number;
+  readonly #allowed: Allowed;
   /** The links that leave something to choose, in the order of the calendar. */
   readonly #order: readonly Link[];
   readonly #radix: readonly number[];
@@ -63,13 +72,14 @@ class Enumerator {
   /** Combinations that exceptions bear on, done once each. */
   readonly #settled = new Set<number>();
   readonly #spare: Float64Array;
+  #weight = 0;
   #steps = 0;
 
-  constructor(cipher: CompiledCipher, lattice: Lattice, links: readonly Link[], window: DaySpan, stepsAllowed: number) {
+  constructor(cipher: CompiledCipher, lattice: Lattice, links: readonly Link[], window: DaySpan, allowed: Allowed) {
     this.#cipher = cipher;
     this.#lattice = lattice;
     this.#window = window;
-    this.#stepsAllowed = stepsAllowed;
+    this.#allowed = allowed;
     this.#order = links.filter(isOpen).sort((one, other) => rankOf(one) - rankOf(other));
     let radix = 1;
     this.#radix = links.map((link) => {
@@ -89,7 +99,7 @@ class Enumerator {
       const days = overlap(exception.span, this.#window);
       if (days !== null && this.#canMatch(exception)) this.#descend(0, [days.from, days.to], 0, exception);
     }
-    return { spans: this.#spans, steps: this.#steps, givenUp: this.#steps > this.#stepsAllowed };
+    return { spans: this.#spans, weight: this.#weight, steps: this.#steps, givenUp: this.#steps > this.#allowed.steps };
   }
 
   /**
@@ -104,13 +114,13 @@ class Enumerator {
     const narrows = wanted === undefined ? level.narrows : null;
     const isLast = depth === this.#levels.length - 1;
     const radix = this.#radix[link] ?? 1;
-    this.#weighAround(level, isLast);
+    this.#weighAround(level, isLast && this.#allowed.keepSpans);
     if (narrows !== null && narrows !== 'year') {
       cutRuns(runs, narrows, this.#cipher.calendar, level.pieces);
       this.#steps += STEPS.cut * (level.pieces.length / PIECE);
     }
 
-    for (let index = 0; index < choices.length && this.#steps <= this.#stepsAllowed; index += 1) {
+    for (let index = 0; index < choices.length && this.#steps <= this.#allowed.steps; index += 1) {
       const choice = choices[index];
       if (choice === undefined || (wanted !== undefined && choice.key !== wanted)) continue;
       this.#steps += STEPS.choice + choice.from.length;
@@ -129,7 +139,7 @@ class Enumerator {
       }
       this.#current[link] = choice;
       const chosen = combination + index * radix;
-      if (isLast) this.#record(days, chosen, likelihood, weighBest(choice, level));
+      if (isLast) this.#record(days, chosen, likelihood, this.#allowed.keepSpans ? weighBest(choice, level) : 0);
       else this.#descend(depth + 1, days, chosen, exception);
     }
     const open = this.#together[link];
@@ -145,7 +155,10 @@ class Enumerator {
       days = this.#daysWith(matching);
     }
     for (let index = 0; index < days.length; index += 2) {
-      this.#spans.add(days[index] ?? 0, days[index + 1] ?? 0, likelihood, best, combination);
+      const from = days[index] ?? 0;
+      const to = days[index + 1] ?? 0;
+      this.#weight += likelihood * (to - from + 1);
+      if (this.#allowed.keepSpans) this.#spans.add(from, to, likelihood, best, combination);
     }
     this.#steps += (STEPS.record * days.length) / 2;
   }

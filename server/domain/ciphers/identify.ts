@@ -24,7 +24,7 @@ export type IdentifyOptions = DecodeOptions & {
 };
 
 /** Work allowed for ranking, over all ciphers: some half a second. */
-export const STEPS_TO_IDENTIFY = 40_000_000;
+const STEPS_TO_IDENTIFY = 20_000_000;
 
 /**
  * Maker unknown: tries every cipher. Those that can't make the mark are counted, not listed; most of them are turned away by

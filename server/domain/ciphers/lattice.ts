@@ -84,7 +84,7 @@ export function buildLattice(rows: readonly (Row | null)[], breaks: readonly num
 }
 
 /** What may truly stand where a glyph was seen, with the chance of seeing it so. */
-export function alternativesOf(
+function alternativesOf(
   glyph: Exclude<Glyph, { kind: 'run' }>,
   cipher: CompiledCipher,
   lookAlikes: boolean,

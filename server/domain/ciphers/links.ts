@@ -40,7 +40,7 @@ export type Links = {
 export type YearRange = { readonly first: number; readonly last: number };
 
 /** Key of the texts that no exception names, in a field that has no number. */
-export const PLAIN_KEY = 0;
+const PLAIN_KEY = 0;
 const YEAR_KEY_BASE = 10_000;
 
 /**
@@ -65,7 +65,7 @@ export function linkFields(cipher: CompiledCipher, lattice: Lattice, years: Year
 }
 
 /** Key of a number in a field: years of different widths are different choices. */
-export function keyOfNumber(field: DigitsField, number: number, width: number): number {
+function keyOfNumber(field: DigitsField, number: number, width: number): number {
   if (field.kind === 'other') return PLAIN_KEY;
   return field.kind === 'year' ? width * YEAR_KEY_BASE + number : number;
 }

@@ -12,7 +12,7 @@ import { linkFields, Walker, type Choice, type Link } from './links.ts';
 import { workOut } from './work-out.ts';
 
 /** At most so many reasons are given. */
-export const REASONS_LISTED = 20;
+const REASONS_LISTED = 20;
 
 /** Splits looked at: the failed ones among them become reasons. */
 const SPLITS_KEPT = 24;
@@ -226,9 +226,9 @@ function reasonForDays(matter: Case, split: Split, budget: Budget): Reason | nul
   const breaks = [...new Set([...matter.reading.breaks, ...split.ends])].filter((place) => place > 0 && place < rows.length);
   breaks.sort((one, other) => one - other);
   const hasDays = (within: DaySpan): boolean => {
-    const { found, steps } = workOut(rows, breaks, cipher, within, budget.steps);
+    const { found, steps } = workOut(rows, breaks, cipher, within, { steps: budget.steps, keepSpans: false });
     budget.steps = Math.max(0, budget.steps - steps);
-    return found !== null && (found.givenUp || found.spans.size > 0);
+    return found !== null && (found.givenUp || found.weight > 0);
   };
   if (budget.steps === 0 || hasDays(days)) return null;
   if (hasDays(use)) return { code: 'outside-limits', message: `${shown}: outside the limits, ${formatSpan(days)}` };

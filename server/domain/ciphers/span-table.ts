@@ -55,13 +55,6 @@ export class SpanTable {
     return ((this.to[index] ?? 0) - (this.from[index] ?? 0) + 1) * (this.likelihood[index] ?? 0);
   }
 
-  /** What all spans weigh together. */
-  totalWeight(): number {
-    let total = 0;
-    for (let index = 0; index < this.size; index += 1) total += this.weight(index);
-    return total;
-  }
-
   /** The weight of a span; 0 for one that is not there. */
   weightOf(from: Day, to: Day): number {
     const mask = this.#slots.length - 1;

@@ -1,6 +1,6 @@
 import type { DaySpan } from '../dates/day.ts';
 import type { CompiledCipher } from './compiled-cipher.ts';
-import { enumerate, type Enumeration } from './enumerate.ts';
+import { enumerate, type Allowed, type Enumeration } from './enumerate.ts';
 import { yearsBetween } from './field-calendar.ts';
 import { buildLattice, type Lattice, type Row } from './lattice.ts';
 import { linkFields, type Link } from './links.ts';
@@ -23,11 +23,11 @@ export function workOut(
   breaks: readonly number[],
   cipher: CompiledCipher,
   days: DaySpan,
-  stepsAllowed: number = STEPS_ALLOWED,
+  allowed: Allowed = { steps: STEPS_ALLOWED, keepSpans: true },
 ): Working {
   const lattice = buildLattice(rows, breaks, cipher);
   const { links, spelled, steps } = linkFields(cipher, lattice, yearsBetween(days.from, days.to, cipher.calendar));
   if (!spelled) return { lattice, links, found: null, steps };
-  const found = enumerate(cipher, lattice, links, days, stepsAllowed);
+  const found = enumerate(cipher, lattice, links, days, allowed);
   return { lattice, links, found, steps: steps + found.steps };
 }
