@@ -24,7 +24,7 @@ function WayIn() {
   const { pathname, search } = useLocation();
   const isDoor = pathname === '/sign-in' || pathname === '/sign-up';
   return (
-    <Link to={paths.signIn(isDoor ? undefined : `${pathname}${search}`)} className="nav-link" {...(pathname === '/sign-in' ? { 'aria-current': 'page' } : {})}>
+    <Link to={paths.signIn(isDoor ? undefined : `${pathname}${search}`)} data-way-in className="nav-link" {...(pathname === '/sign-in' ? { 'aria-current': 'page' } : {})}>
       Sign in
     </Link>
   );

@@ -10,7 +10,7 @@ import { ErrorSummary } from '../../ui/error-summary.tsx';
 import type { SummaryFault } from '../../ui/error-summary.tsx';
 import { SelectField } from '../../ui/select-field.tsx';
 import { TextField } from '../../ui/text-field.tsx';
-import { makersToChoose, modelsToChoose } from './decode-queries.ts';
+import { modelsToChoose } from './decode-queries.ts';
 import type { DecodeState } from './decode-state.ts';
 import type { ChangeState } from './use-decode-state.ts';
 
@@ -65,8 +65,7 @@ export function MachineForm({ state, change, model, refused }: Props) {
 
 function ModelField({ state, change, fault }: { readonly state: DecodeState; readonly change: ChangeState; readonly fault: string | null }) {
   const models = useQuery(modelsToChoose());
-  const makers = useQuery(makersToChoose());
-  const list = modelsFor(models.data ?? [], state, makers.data?.find(({ slug }) => slug === state.maker)?.buildsMachines ?? true);
+  const list = ownFirst(models.data ?? [], state.maker);
   const unknown = models.isSuccess && state.model !== null && !models.data.some(({ slug }) => slug === state.model);
   return (
     <SelectField
@@ -111,11 +110,9 @@ function PositionField({ state, change, model }: { readonly state: DecodeState; 
   );
 }
 
-/** A founder casts for others, so only a maker of machines narrows the models. The one already chosen always stays. */
-function modelsFor(models: readonly ModelItem[], { maker, model }: DecodeState, buildsMachines: boolean): readonly ModelItem[] {
-  if (maker === null || !buildsMachines) return models;
-  const own = models.filter((one) => one.maker.slug === maker || one.slug === model);
-  return own.length === 0 ? models : own;
+/** The maker's own models first. The others stay, since a founder casts for other makers as well. */
+function ownFirst(models: readonly ModelItem[], maker: string | null): readonly ModelItem[] {
+  return [...models.filter((one) => one.maker.slug === maker), ...models.filter((one) => one.maker.slug !== maker)];
 }
 
 function byMaker(models: readonly ModelItem[]): [string, ModelItem[]][] {

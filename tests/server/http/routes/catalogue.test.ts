@@ -135,7 +135,7 @@ describe('what the pages say', () => {
     expect(brackwater.ciphers).toBe(brackwater.cipherList.length);
     expect(brackwater.works[0]?.provenance.sources.length).toBeGreaterThan(0);
     const skerry = await page(MakerPage, 'makers/skerry-foundry');
-    expect([skerry.buildsMachines, skerry.poursIron, skerry.foundryMark]).toEqual([false, true, 'S◇']);
+    expect([skerry.buildsMachines, skerry.poursIron, skerry.foundryMark]).toEqual([true, true, 'S◇']);
     expect(skerry.pouredFor.map(({ slug }) => slug)).toContain('brackwater-tractor-works');
     expect(skerry.pouredFor.map(({ slug }) => slug)).not.toContain('skerry-foundry');
   });
