@@ -15,7 +15,7 @@ export type Working = {
 };
 
 /** Beyond this the work is given up: the reading leaves too much open to be worth listing. */
-export const STEPS_ALLOWED = 2_000_000;
+export const STEPS_ALLOWED = 1_400_000;
 
 /** `breaks` counts glyphs of the reading; `days` are those in question. */
 export function workOut(
