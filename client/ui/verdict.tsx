@@ -1,9 +1,9 @@
-import type { TYPE_VERDICTS } from '#contract/castings.ts';
+import type { FitmentVerdict } from '#domain/vocabulary.ts';
 import type { FitVerdict } from '#domain/fit/fit.ts';
 import { Icon } from './icon.tsx';
 import type { IconName } from './icon.tsx';
 
-export type TypeVerdict = (typeof TYPE_VERDICTS)[number] | 'not-in-catalogue';
+export type TypeVerdict = FitmentVerdict | 'not-in-catalogue';
 export type VerdictKind = FitVerdict | TypeVerdict;
 
 export type Tone = 'verdigris' | 'straw' | 'temper' | 'scale' | 'slag';

@@ -1,6 +1,6 @@
 import type { RelationMappings } from 'objection';
 import type { DateRange } from '#db/ranges.ts';
-import type { DateMeaning, DatePrecision } from '#db/vocabulary.ts';
+import type { DateMeaning, DatePrecision } from '#domain/vocabulary.ts';
 import { CatalogueModel, factRelations } from './catalogue-model.ts';
 import { Series } from './series.ts';
 

@@ -1,5 +1,5 @@
 import type { Modifiers, QueryBuilder, RelationMappings } from 'objection';
-import type { FactKind } from '#db/vocabulary.ts';
+import type { FactKind } from '#domain/vocabulary.ts';
 import { Member } from './member.ts';
 import { RegisterModel } from './register-model.ts';
 

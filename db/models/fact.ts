@@ -1,4 +1,4 @@
-import type { FactKind } from '#db/vocabulary.ts';
+import type { FactKind } from '#domain/vocabulary.ts';
 import { RegisterModel } from './register-model.ts';
 
 /** The identity of a row of the catalogue, whatever its table. */

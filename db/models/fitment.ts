@@ -1,6 +1,6 @@
 import type { RelationMappings } from 'objection';
 import type { NumberRange } from '#db/ranges.ts';
-import type { FitmentVerdict } from '#db/vocabulary.ts';
+import type { FitmentVerdict } from '#domain/vocabulary.ts';
 import { Casting } from './casting.ts';
 import { CatalogueModel, factRelations } from './catalogue-model.ts';
 import { Position } from './position.ts';

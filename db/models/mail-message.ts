@@ -1,4 +1,5 @@
-import type { MailState, NoticeKind } from '#db/vocabulary.ts';
+import type { MailState } from '#db/vocabulary.ts';
+import type { NoticeKind } from '#domain/vocabulary.ts';
 import { RegisterModel } from './register-model.ts';
 
 /** A letter and how it fared. Who it went to is forgotten with the member; what it said, as soon as it is settled. */

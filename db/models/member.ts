@@ -1,5 +1,6 @@
 import type { RelationMappings } from 'objection';
-import type { MemberRole, MemberScopeKind } from '#db/vocabulary.ts';
+import type { MemberScopeKind } from '#db/vocabulary.ts';
+import type { MemberRole } from '#domain/vocabulary.ts';
 import { MemberScope } from './member-scope.ts';
 import { RegisterModel } from './register-model.ts';
 

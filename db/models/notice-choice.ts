@@ -1,4 +1,4 @@
-import type { NoticeKind } from '#db/vocabulary.ts';
+import type { NoticeKind } from '#domain/vocabulary.ts';
 import { RegisterModel } from './register-model.ts';
 
 /** Whether a kind of notice also comes by e-mail. Where a member chose nothing there is no row. */

@@ -1,4 +1,4 @@
-import type { NoticeKind } from '#db/vocabulary.ts';
+import type { NoticeKind } from '#domain/vocabulary.ts';
 import { RegisterModel } from './register-model.ts';
 
 export class Notice extends RegisterModel {

@@ -1,7 +1,7 @@
 import type { RelationMappings } from 'objection';
 import type { RangeStanding } from '#domain/serials/build-window.ts';
 import type { DateRange, NumberRange } from '#db/ranges.ts';
-import type { DateMeaning, DatePrecision } from '#db/vocabulary.ts';
+import type { DateMeaning, DatePrecision } from '#domain/vocabulary.ts';
 import { Account } from './account.ts';
 import { CatalogueModel, factRelations } from './catalogue-model.ts';
 import { Series } from './series.ts';

@@ -1,5 +1,5 @@
 import type { RelationMappings } from 'objection';
-import type { SourceKind } from '#db/vocabulary.ts';
+import type { SourceKind } from '#domain/vocabulary.ts';
 import { Member } from './member.ts';
 import { RegisterModel } from './register-model.ts';
 

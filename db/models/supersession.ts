@@ -1,5 +1,5 @@
 import type { RelationMappings } from 'objection';
-import type { Interchange } from '#db/vocabulary.ts';
+import type { Interchange } from '#domain/vocabulary.ts';
 import { Casting } from './casting.ts';
 import { CatalogueModel, factRelations } from './catalogue-model.ts';
 

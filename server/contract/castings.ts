@@ -1,10 +1,8 @@
 import { z } from 'zod';
+import { FITMENT_VERDICTS, INTERCHANGES } from '#domain/vocabulary.ts';
 import { BySlug, History, Id, listAnswer, listQuery, Named, OpenSpan, Provenance, Slug, WholeNumber } from './common.ts';
 import { MarkText } from './decode.ts';
 import { endpoint } from './endpoint.ts';
-
-export const TYPE_VERDICTS = ['as-built', 'later-fits', 'earlier-fits', 'does-not-belong'] as const;
-const INTERCHANGES = ['both-ways', 'new-for-old'] as const;
 
 const CastingRef = z.object({ slug: Slug, number: z.string(), pattern: z.string().nullable() });
 
@@ -34,7 +32,7 @@ export const Fitment = z.object({
   last: WholeNumber.nullable(),
   /** When machines with these serials were built, by the register's reading; null where the ranges don't say. */
   built: OpenSpan.nullable(),
-  verdict: z.enum(TYPE_VERDICTS),
+  verdict: z.enum(FITMENT_VERDICTS),
   note: z.string().nullable(),
   provenance: Provenance,
 });

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { parseDay } from '#domain/dates/day.ts';
+import { SOURCE_KINDS } from '#domain/vocabulary.ts';
 import { LIMITS } from './limits.ts';
 
 export const Slug = z
@@ -52,7 +53,6 @@ export const BySlug = z.strictObject({ slug: Slug });
 export const Named = z.object({ slug: Slug, name: z.string() }).meta({ id: 'Named' });
 export type Named = z.infer<typeof Named>;
 
-export const SOURCE_KINDS = ['book', 'drawing', 'plate', 'photo', 'sighting', 'correspondence', 'own-knowledge'] as const;
 export const SourceKind = z.enum(SOURCE_KINDS);
 export type SourceKind = z.infer<typeof SourceKind>;
 

@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { SERIAL_STANDINGS } from '#domain/serials/build-window.ts';
 import { BySlug, DateSpan, FactSource, History, Id, IsoDay, listAnswer, listQuery, Named, OpenSpan, Provenance, Slug, WholeNumber } from './common.ts';
 import { endpoint } from './endpoint.ts';
 import { Lead } from './fit.ts';
@@ -69,8 +70,6 @@ export const readModelHistory = endpoint({
   answer: History,
 });
 
-const BUILD_STANDINGS = ['in-range', 'before-first', 'after-last', 'gap', 'unknown-prefix'] as const;
-
 const RangeHeld = SerialRangeItem.omit({ model: true, series: true, account: true, preferred: true });
 
 const Placing = {
@@ -78,7 +77,7 @@ const Placing = {
   /** Only where the numbers were issued in order; shown with its window, never alone. */
   likely: z.object({ day: IsoDay, from: IsoDay, to: IsoDay }).nullable(),
   range: RangeHeld.nullable(),
-  standing: z.enum(BUILD_STANDINGS),
+  standing: z.enum(SERIAL_STANDINGS),
   /** The ranges on either side of a number that none holds. */
   neighbours: z.array(RangeHeld),
   sources: z.array(FactSource),

@@ -1,10 +1,10 @@
 import { z } from 'zod';
+import { NOTICE_KINDS } from '#domain/vocabulary.ts';
 import { Id, listAnswer, listQuery } from './common.ts';
 import { endpoint } from './endpoint.ts';
 import { LinkToken } from './people.ts';
 
 /** Kinds of notice; a kind is added here, in the words of the mail templates and nowhere else. */
-export const NOTICE_KINDS = ['account', 'role', 'contribution', 'recomputed', 'reading', 'handover', 'message'] as const;
 export const NoticeKind = z.enum(NOTICE_KINDS);
 export type NoticeKind = z.infer<typeof NoticeKind>;
 

@@ -1,10 +1,10 @@
 import { z } from 'zod';
+import { MEMBER_ROLES } from '#domain/vocabulary.ts';
 import { Id, Named } from './common.ts';
 
 /** Sign-up, sign-in and what a member says about themselves. */
 
-export const ROLES = ['member', 'moderator', 'registrar'] as const;
-export const Role = z.enum(ROLES);
+export const Role = z.enum(MEMBER_ROLES);
 export type Role = z.infer<typeof Role>;
 
 /** NIST SP 800-63B-4: 15 where the password is the only factor, 8 beside a second one, no rules of composition. */

@@ -1,12 +1,8 @@
 import { z } from 'zod';
+import { RANGE_STANDINGS } from '#domain/serials/build-window.ts';
+import { DATE_MEANINGS, DATE_PRECISIONS } from '#domain/vocabulary.ts';
 import { BySlug, DateSpan, History, Id, listAnswer, listQuery, Named, Provenance, Slug, WholeNumber } from './common.ts';
 import { endpoint } from './endpoint.ts';
-
-/** How precisely the source gives the days: a range "of 1939" is of year precision. */
-const DATE_PRECISIONS = ['day', 'month', 'year'] as const;
-const RANGE_STANDINGS = ['solid', 'interpolated', 'conjectural'] as const;
-/** Four different things a list of numbers may date; only `built` gives a build window. */
-const RANGE_MEANINGS = ['built', 'dispatched', 'sold', 'model-year'] as const;
 
 export const SeriesRef = z.object({
   id: Id,
@@ -32,7 +28,7 @@ export const SerialRangeItem = z.object({
   last: WholeNumber.nullable(),
   dates: DateSpan,
   precision: z.enum(DATE_PRECISIONS),
-  meaning: z.enum(RANGE_MEANINGS),
+  meaning: z.enum(DATE_MEANINGS),
   standing: z.enum(RANGE_STANDINGS),
   inOrder: z.boolean(),
 });

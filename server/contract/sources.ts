@@ -1,24 +1,10 @@
 import { z } from 'zod';
+import { FACT_KINDS } from '#domain/vocabulary.ts';
 import { BySlug, History, Id, listAnswer, listQuery, Slug, SourceKind } from './common.ts';
 import { endpoint } from './endpoint.ts';
 
 export const SourceItem = z.object({ id: Id, slug: Slug, kind: SourceKind, title: z.string(), facts: z.number().int() });
 export type SourceItem = z.infer<typeof SourceItem>;
-
-export const FACT_KINDS = [
-  'maker',
-  'works',
-  'model',
-  'part-type',
-  'position',
-  'casting',
-  'fitment',
-  'supersession',
-  'series',
-  'serial-range',
-  'anchor',
-  'cipher',
-] as const;
 
 export const SourcePage = SourceItem.extend({
   /** The kind's own fields, in the order to show them. */

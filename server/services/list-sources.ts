@@ -1,5 +1,5 @@
 import type { Knex } from 'knex';
-import type { SourceKind } from '#db/vocabulary.ts';
+import type { SourceKind } from '#domain/vocabulary.ts';
 import { Source } from '#db/models/source.ts';
 import { countsBy } from './counts-by.ts';
 import { listPage } from './list-page.ts';

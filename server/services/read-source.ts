@@ -1,5 +1,5 @@
 import type { Knex } from 'knex';
-import type { FactKind } from '#db/vocabulary.ts';
+import type { FactKind } from '#domain/vocabulary.ts';
 import { Anchor } from '#db/models/anchor.ts';
 import { Casting } from '#db/models/casting.ts';
 import { Cipher } from '#db/models/cipher.ts';

@@ -9,7 +9,7 @@ import { AuditRow } from '#db/models/audit-row.ts';
 import { Authenticator } from '#db/models/authenticator.ts';
 import { MailMessage } from '#db/models/mail-message.ts';
 import { Member } from '#db/models/member.ts';
-import type { MemberRole } from '#db/vocabulary.ts';
+import type { MemberRole } from '#domain/vocabulary.ts';
 import { hashPassword } from '#server/services/people/passwords.ts';
 import { appOver } from './app.ts';
 import { keptLog } from './log.ts';

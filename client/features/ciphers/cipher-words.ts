@@ -8,6 +8,7 @@ import type {
   WeekRule,
 } from '#domain/ciphers/definition.ts';
 import { civilOf } from '#domain/dates/day.ts';
+import { MONTHS } from '#domain/dates/format-day.ts';
 import { dayFrom } from '../../lib/say-date.ts';
 import { sayCount } from '../../lib/say-number.ts';
 
@@ -26,20 +27,6 @@ const WEEKS: Readonly<Record<WeekRule, string>> = {
   'first-full-sunday': 'week 1 is the first full week from Sunday to Saturday',
 };
 
-const MONTHS = [
-  'January',
-  'February',
-  'March',
-  'April',
-  'May',
-  'June',
-  'July',
-  'August',
-  'September',
-  'October',
-  'November',
-  'December',
-] as const;
 const QUARTERS = ['January to March', 'April to June', 'July to September', 'October to December'] as const;
 
 /** What a field is called: `month`, `fixed`, or the name a detail was given. */

@@ -1,5 +1,6 @@
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
-import { chooseNotices, NOTICE_KINDS } from '#contract/notices.ts';
+import { chooseNotices } from '#contract/notices.ts';
+import { NOTICE_KINDS } from '#domain/vocabulary.ts';
 import type { NoticeKind } from '#contract/notices.ts';
 import { call } from '../../lib/call.ts';
 import { capital } from '../../lib/say-number.ts';

@@ -2,7 +2,8 @@ import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { changeRole } from '#contract/admin.ts';
 import type { MemberPage } from '#contract/admin.ts';
-import { Role, ROLES } from '#contract/people.ts';
+import { Role } from '#contract/people.ts';
+import { MEMBER_ROLES } from '#domain/vocabulary.ts';
 import { call } from '../../lib/call.ts';
 import { capital } from '../../lib/say-number.ts';
 import { useContractForm } from '../../lib/use-contract-form.ts';
@@ -49,7 +50,7 @@ export function RoleForm({ member, onDone }: { readonly member: MemberPage; read
           onChange={({ target }) => setRole(Role.parse(target.value))}
           className="max-w-[320px]"
         >
-          {ROLES.map((one) => (
+          {MEMBER_ROLES.map((one) => (
             <option key={one} value={one}>
               {capital(ROLE_WORDS[one])}
             </option>

@@ -3,7 +3,7 @@ import { useQueries, useSuspenseQuery } from '@tanstack/react-query';
 import type { ReactNode } from 'react';
 import { Link } from 'react-router-dom';
 import type { LoaderFunction } from 'react-router-dom';
-import { TYPE_VERDICTS } from '#contract/castings.ts';
+import { FITMENT_VERDICTS } from '#domain/vocabulary.ts';
 import type { CastingPage, Fitment } from '#contract/castings.ts';
 import type { CipherPage } from '#contract/ciphers.ts';
 import { castingPage } from '../../features/castings/castings-queries.ts';
@@ -244,7 +244,7 @@ function CipherLinks({ ciphers, last }: { readonly ciphers: CastingPage['ciphers
 }
 
 function inOrderOfVerdict(fitments: readonly Fitment[]): Fitment[] {
-  return fitments.toSorted((one, other) => TYPE_VERDICTS.indexOf(one.verdict) - TYPE_VERDICTS.indexOf(other.verdict));
+  return fitments.toSorted((one, other) => FITMENT_VERDICTS.indexOf(one.verdict) - FITMENT_VERDICTS.indexOf(other.verdict));
 }
 
 /** As a sentence, whichever way it was entered. */

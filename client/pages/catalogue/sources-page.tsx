@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { SOURCE_KINDS } from '#contract/common.ts';
+import { SOURCE_KINDS } from '#domain/vocabulary.ts';
 import { listSources } from '#contract/sources.ts';
 import { saySourceKind } from '../../features/sources/say-source.ts';
 import { sourcesList } from '../../features/sources/sources-queries.ts';

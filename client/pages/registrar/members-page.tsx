@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { listMembers, MEMBER_STATES } from '#contract/admin.ts';
 import type { MemberItem } from '#contract/admin.ts';
-import { ROLES } from '#contract/people.ts';
+import { MEMBER_ROLES } from '#domain/vocabulary.ts';
 import { ROLE_WORDS, STATE_WORDS } from '../../features/registrar/member-words.ts';
 import { MembersTable } from '../../features/registrar/members-table.tsx';
 import { RegistrarLinks } from '../../features/registrar/registrar-links.tsx';
@@ -15,7 +15,7 @@ const ORDERS = [
   { value: 'name', text: 'name' },
   { value: '-joined', text: 'joined, newest first' },
 ] as const;
-const ROLE_CHOICES = ROLES.map((role) => ({ value: role, text: ROLE_WORDS[role] }));
+const ROLE_CHOICES = MEMBER_ROLES.map((role) => ({ value: role, text: ROLE_WORDS[role] }));
 const STATE_CHOICES = MEMBER_STATES.map((state) => ({ value: state, text: STATE_WORDS[state] }));
 
 export function Component() {

@@ -1,6 +1,6 @@
 import { civilOf, daysInMonth, type CivilDay, type Day, type DaySpan } from './day.ts';
 
-const MONTHS = [
+export const MONTHS = [
   'January',
   'February',
   'March',

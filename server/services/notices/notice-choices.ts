@@ -1,5 +1,5 @@
 import type { Knex } from 'knex';
-import { NOTICE_KINDS } from '#contract/notices.ts';
+import { NOTICE_KINDS } from '#domain/vocabulary.ts';
 import type { NoticeKind } from '#contract/notices.ts';
 import { NoticeChoice } from '#db/models/notice-choice.ts';
 

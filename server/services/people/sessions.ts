@@ -1,6 +1,6 @@
 import type { Knex } from 'knex';
 import { z } from 'zod';
-import { ROLES } from '#contract/people.ts';
+import { MEMBER_ROLES } from '#domain/vocabulary.ts';
 import { Session } from '#db/models/session.ts';
 import { MEMBER_SCOPES, SESSION_STAGES, SIGN_IN_STRENGTHS } from '#db/vocabulary.ts';
 
@@ -49,7 +49,7 @@ const FoundSession = z.object({
   strength: z.enum(SIGN_IN_STRENGTHS),
   confirmedAt: z.string(),
   displayName: z.string(),
-  role: z.enum(ROLES),
+  role: z.enum(MEMBER_ROLES),
   scope: z.enum(MEMBER_SCOPES),
   makerIds: z.array(z.string()),
   hasSecondFactor: z.boolean(),

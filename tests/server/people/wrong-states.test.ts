@@ -1,8 +1,8 @@
 import { v7 as uuidV7 } from 'uuid';
 import { describe, expect, test } from 'vitest';
-import { ROLES } from '#contract/people.ts';
 import { Maker } from '#db/models/maker.ts';
-import { ATTEMPT_KINDS, LINK_PURPOSES, MEMBER_ROLES, MEMBER_SCOPES, SESSION_STAGES, SIGN_IN_STRENGTHS } from '#db/vocabulary.ts';
+import { ATTEMPT_KINDS, LINK_PURPOSES, MEMBER_SCOPES, SESSION_STAGES, SIGN_IN_STRENGTHS } from '#db/vocabulary.ts';
+import { MEMBER_ROLES } from '#domain/vocabulary.ts';
 import { usePeople } from '#tests/support/people.ts';
 
 const people = usePeople();
@@ -142,9 +142,5 @@ describe('the words of a column', () => {
     );
     const inDatabase = [...(rows[0]?.definition ?? '').matchAll(/'([^']+)'/g)].map(([, word]) => word);
     expect(inDatabase).toEqual([...words]);
-  });
-
-  test('for roles are the contract’s', () => {
-    expect([...MEMBER_ROLES]).toEqual([...ROLES]);
   });
 });

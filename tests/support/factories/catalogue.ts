@@ -7,7 +7,7 @@ import { Fact } from '#db/models/fact.ts';
 import { FactVersion } from '#db/models/fact-version.ts';
 import { Maker } from '#db/models/maker.ts';
 import { Member } from '#db/models/member.ts';
-import type { FactKind } from '#db/vocabulary.ts';
+import type { FactKind } from '#domain/vocabulary.ts';
 
 /**
  * Facts for tests: fill in what was not said, build parents on demand. Each has a version in force and no source, which the schema

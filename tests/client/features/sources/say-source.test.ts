@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { FACT_KINDS } from '#contract/sources.ts';
+import { FACT_KINDS } from '#domain/vocabulary.ts';
 import { groupFacts, pathOfFact, sayFactKind } from '#client/features/sources/say-source.ts';
 
 const fact = (kind: (typeof FACT_KINDS)[number], slug: string | null) => ({

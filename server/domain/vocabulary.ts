@@ -1,0 +1,44 @@
+/** The register's own words, which the interface and the database say alike. */
+
+/** The kinds of fact; each has a table of its own. */
+export const FACT_KINDS = [
+  'maker',
+  'works',
+  'model',
+  'part-type',
+  'position',
+  'casting',
+  'fitment',
+  'supersession',
+  'series',
+  'serial-range',
+  'anchor',
+  'cipher',
+] as const;
+export type FactKind = (typeof FACT_KINDS)[number];
+
+export const SOURCE_KINDS = ['book', 'drawing', 'plate', 'photo', 'sighting', 'correspondence', 'own-knowledge'] as const;
+export type SourceKind = (typeof SOURCE_KINDS)[number];
+
+/** `as-built`: left the works so. The two that fit bolt on and work, but were never there on that serial. */
+export const FITMENT_VERDICTS = ['as-built', 'later-fits', 'earlier-fits', 'does-not-belong'] as const;
+export type FitmentVerdict = (typeof FITMENT_VERDICTS)[number];
+
+/** Whether the old casting also goes where the new one was fitted. */
+export const INTERCHANGES = ['both-ways', 'new-for-old'] as const;
+export type Interchange = (typeof INTERCHANGES)[number];
+
+/** What a date by a serial number is the date of: four different things, never mixed. */
+export const DATE_MEANINGS = ['built', 'dispatched', 'sold', 'model-year'] as const;
+export type DateMeaning = (typeof DATE_MEANINGS)[number];
+
+/** How finely the source tells a span's ends. */
+export const DATE_PRECISIONS = ['day', 'month', 'year'] as const;
+export type DatePrecision = (typeof DATE_PRECISIONS)[number];
+
+/** What a member can be told of, and choose to get by e-mail too. */
+export const NOTICE_KINDS = ['account', 'role', 'contribution', 'recomputed', 'reading', 'handover', 'message'] as const;
+export type NoticeKind = (typeof NOTICE_KINDS)[number];
+
+export const MEMBER_ROLES = ['member', 'moderator', 'registrar'] as const;
+export type MemberRole = (typeof MEMBER_ROLES)[number];
