@@ -42,7 +42,7 @@ const NETWORK_CALLS = new Set<unknown>(['connect', 'read', 'write', 'getaddrinfo
 const SQLSTATE = /^[0-9A-Z]{5}$/;
 
 /** Failures to reach the database that the driver and the pool report without any code. */
-const LOST_CONNECTION = /^(?:Connection terminated|timeout expired|Client has encountered a connection error)/;
+const LOST_CONNECTION = /^(?:Connection terminated|timeout expired|Client (?:has encountered a connection error|was closed))/;
 
 /** Any error as a problem; what nobody expected becomes a bare `internal`. */
 export function problemOf(error: unknown): ProblemError {

@@ -60,7 +60,7 @@ export async function signInOn(page: Page, email: string, { password = PASSWORD,
 }
 
 export async function fillSignIn(page: Page, email: string, password = PASSWORD): Promise<void> {
-  await page.getByLabel('E-mail address').fill(email);
+  await page.getByRole('textbox', { name: 'E-mail address' }).fill(email);
   await page.getByLabel('Password', { exact: true }).fill(password);
   await page.getByRole('button', { name: 'Sign in', exact: true }).click();
 }

@@ -42,8 +42,13 @@ describe('an error as a problem', () => {
     expect(problemOf(new AggregateError([refused, refused])).kind).toBe('unavailable');
   });
 
-  test('is unavailable when the driver lost its connection and gives no code', () => {
-    expect(problemOf(new Error('Connection terminated unexpectedly')).kind).toBe('unavailable');
+  test.each([
+    'Connection terminated unexpectedly',
+    'timeout expired',
+    'Client has encountered a connection error and is not queryable',
+    'Client was closed and is not queryable',
+  ])('is unavailable when the driver lost its connection and gives no code: %s', (message) => {
+    expect(problemOf(new Error(message)).kind).toBe('unavailable');
   });
 
   test('is internal when it is no error at all', () => {
