@@ -19,7 +19,6 @@ async function main(): Promise<void> {
   const jobs = startJobRunner({ url: config.databaseUrl, handlings: mailHandlings({ knex, mailer }), logger });
   const app = createApp({ knex, config, logger, clock: todayInUtc, jobs });
   const server = await startServer(app, config);
-  logger.info({ host: config.host, port: server.port, origin: config.publicOrigin }, 'listening');
 
   const stop = async (signal: NodeJS.Signals): Promise<void> => {
     logger.info({ signal }, 'stopping');
@@ -29,6 +28,8 @@ async function main(): Promise<void> {
   };
   process.once('SIGTERM', (signal) => void stop(signal));
   process.once('SIGINT', (signal) => void stop(signal));
+  // Said last: whoever waits for it may tell the server to stop at once.
+  logger.info({ host: config.host, port: server.port, origin: config.publicOrigin }, 'listening');
 }
 
 function configOrExit(): Config {
