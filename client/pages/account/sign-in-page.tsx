@@ -30,8 +30,9 @@ export function Component() {
   if (viewer) return <Navigate to={viewer.secondFactorOwed ? paths.account('second-factors') : safeNext(params.get('next'), paths.decode())} replace />;
 
   const onAnswer = (answer: SignInState) => {
+    // This page stays if they sign out before the next one is there, and must then begin at its first step.
+    setWays(answer.state === 'signed-in' ? null : answer.ways);
     if (answer.state === 'signed-in') changeViewer(queryClient, answer.me);
-    else setWays(answer.ways);
   };
   return (
     <FormPage
