@@ -1,8 +1,5 @@
 /** The words the register's columns hold. The checks of the schema say the same, and a test compares them. */
 
-export const MACHINE_KINDS = ['crawler-tractor', 'lathe', 'stationary-engine', 'barn-machine'] as const;
-export type MachineKind = (typeof MACHINE_KINDS)[number];
-
 /** How a letter fares. Whoever gives it up has tried for long. */
 export const MAIL_STATES = ['queued', 'sent', 'failed'] as const;
 export type MailState = (typeof MAIL_STATES)[number];

@@ -5,6 +5,8 @@ import { lazyPage } from '../lib/lazy-page.ts';
 import { paths } from '../lib/paths.ts';
 import { peopleRoutes } from '../pages/account/people-routes.ts';
 import { catalogueRoutes } from '../pages/catalogue/catalogue-routes.ts';
+import { contributionRoutes } from '../pages/contributions/contribution-routes.ts';
+import { moderationRoutes } from '../pages/moderation/moderation-routes.ts';
 import { ErrorPage, FramedErrorPage, NotFoundPage } from './error-page.tsx';
 import { FirstLoad } from './first-load.tsx';
 import { Layout } from './layout.tsx';
@@ -23,6 +25,8 @@ function routes(queryClient: QueryClient): RouteObject[] {
             { path: '/', element: <Navigate to={paths.decode()} replace /> },
             { path: '/decode', lazy: lazyPage(() => import('../pages/decode/decode-page.tsx'), queryClient) },
             ...catalogueRoutes(queryClient),
+            ...contributionRoutes(queryClient),
+            ...moderationRoutes(queryClient),
             ...peopleRoutes(queryClient),
             { path: '/problems/:kind', lazy: lazyPage(() => import('./problem-page.tsx'), queryClient) },
             { path: '*', Component: NotFoundPage },

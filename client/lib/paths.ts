@@ -1,3 +1,5 @@
+import type { FactKind } from '#domain/vocabulary.ts';
+
 /** Every address of the interface, made in one place. */
 export const paths = {
   decode: (search = '') => `/decode${search}`,
@@ -34,6 +36,18 @@ export const paths = {
   registrarMembers: (search = '') => `/registrar/members${search}`,
   registrarMember: (id: string) => `/registrar/members/${id}`,
   registrarAudit: (search = '') => `/registrar/audit${search}`,
+  contribute: () => '/contribute',
+  /** Begins a contribution: of a kind, or a change to a fact. */
+  contributeKind: (kind: FactKind) => `/contribute/${kind}`,
+  changeFact: (id: string) => `/facts/${id}/change`,
+  contribution: (id: string) => `/contributions/${id}`,
+  contributionDraft: (id: string) => `/contributions/${id}/draft`,
+  myContributions: (search = '') => `/contributions${search}`,
+  contributor: (id: string, search = '') => `/contributors/${id}${search}`,
+  factHistory: (id: string) => `/facts/${id}/history`,
+  mark: (id: string) => `/marks/${id}`,
+  queue: (search = '') => `/moderation${search}`,
+  reworks: () => '/moderation/reworks',
   post: () => '/post',
   letter: (id: string) => `/post/${id}`,
 } as const;

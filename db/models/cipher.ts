@@ -1,5 +1,5 @@
 import type { RelationMappings } from 'objection';
-import type { MachineKind } from '#db/vocabulary.ts';
+import type { MachineKind } from '#domain/vocabulary.ts';
 import { sourcesOf } from './catalogue-model.ts';
 import { CipherVersion } from './cipher-version.ts';
 import type { FactSource } from './fact-source.ts';

@@ -1,6 +1,6 @@
 import type { RelationMappings } from 'objection';
 import type { DateRange } from '#db/ranges.ts';
-import type { MachineKind } from '#db/vocabulary.ts';
+import type { MachineKind } from '#domain/vocabulary.ts';
 import { CatalogueModel, factRelations } from './catalogue-model.ts';
 import { Maker } from './maker.ts';
 

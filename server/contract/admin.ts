@@ -97,6 +97,19 @@ export const AUDIT_ACTS = [
   'member.suspended',
   'member.unsuspended',
   'notices.chosen',
+  'contribution.started',
+  'contribution.discarded',
+  'contribution.put-forward',
+  'contribution.withdrawn',
+  'contribution.commented',
+  'contribution.entered',
+  'contribution.sent-back',
+  'contribution.turned-down',
+  'fact.brought-back',
+  'fact.retired',
+  'fact.flagged',
+  'flag.settled',
+  'series.reading-marked',
 ] as const;
 export const AuditAct = z.enum(AUDIT_ACTS);
 export type AuditAct = z.infer<typeof AuditAct>;

@@ -14,8 +14,12 @@ export const FACT_KINDS = [
   'serial-range',
   'anchor',
   'cipher',
+  'wear-limit',
 ] as const;
 export type FactKind = (typeof FACT_KINDS)[number];
+
+export const MACHINE_KINDS = ['crawler-tractor', 'lathe', 'stationary-engine', 'barn-machine'] as const;
+export type MachineKind = (typeof MACHINE_KINDS)[number];
 
 export const SOURCE_KINDS = ['book', 'drawing', 'plate', 'photo', 'sighting', 'correspondence', 'own-knowledge'] as const;
 export type SourceKind = (typeof SOURCE_KINDS)[number];
@@ -42,3 +46,32 @@ export type NoticeKind = (typeof NOTICE_KINDS)[number];
 
 export const MEMBER_ROLES = ['member', 'moderator', 'registrar'] as const;
 export type MemberRole = (typeof MEMBER_ROLES)[number];
+
+/**
+ * Where a contribution stands. `superseded`, the seventh state people see, is an entered one whose version a later one replaced, and is
+ * worked out, not kept.
+ */
+export const CONTRIBUTION_STATES = ['drafted', 'put-forward', 'sent-back', 'entered', 'turned-down', 'withdrawn'] as const;
+export type ContributionState = (typeof CONTRIBUTION_STATES)[number];
+
+export const DECISIONS = ['enter', 'send-back', 'turn-down'] as const;
+export type Decision = (typeof DECISIONS)[number];
+
+/** What a mark is. */
+export const MARK_KINDS = ['casting-number', 'date-code', 'foundry-mark', 'serial', 'plate', 'other'] as const;
+export type MarkKind = (typeof MARK_KINDS)[number];
+
+/** Cast when poured, stamped after machining: never merged. */
+export const MARK_TECHNIQUES = ['cast', 'stamped'] as const;
+export type MarkTechnique = (typeof MARK_TECHNIQUES)[number];
+
+/** Who sees a machine or a part. */
+export const VISIBILITIES = ['private', 'by-link', 'public'] as const;
+export type Visibility = (typeof VISIBILITIES)[number];
+
+/** Which way a measure wears: `most`: it may grow to the limit; `least`: it may shrink to it. */
+export const WEAR_DIRECTIONS = ['most', 'least'] as const;
+export type WearDirection = (typeof WEAR_DIRECTIONS)[number];
+
+export const MEASURE_UNITS = ['mm', 'in', 'degree', 'gram', 'newton-metre'] as const;
+export type MeasureUnit = (typeof MEASURE_UNITS)[number];

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { MACHINE_KINDS } from '#db/vocabulary.ts';
+import { MACHINE_KINDS } from '#domain/vocabulary.ts';
 import { DATE_MEANINGS, DATE_PRECISIONS, FACT_KINDS, FITMENT_VERDICTS, INTERCHANGES, SOURCE_KINDS } from '#domain/vocabulary.ts';
 import { RANGE_STANDINGS } from '#domain/serials/build-window.ts';
 import { useDatabase } from '#tests/support/database.ts';
