@@ -5,6 +5,9 @@ import { defineConfig } from 'vitest/config';
 /** The zones the pure tests run under: west and east of Greenwich, each with its own rule for summer time. */
 const TIME_ZONES = ['America/New_York', 'Australia/Lord_Howe'] as const;
 
+/** Files that put a stand-in in place of a package: only they need modules of their own. */
+const WITH_STAND_INS = ['tests/server/people/sign-in.test.ts', 'tests/server/people/sign-up.test.ts'];
+
 /** Where the development server passes API calls; `npm run dev` sets it. */
 const apiOrigin = process.env['POURBOOK_API_ORIGIN'] ?? 'http://127.0.0.1:5080';
 
@@ -25,6 +28,8 @@ export default defineConfig({
           name: `domain ${zone}`,
           include: ['tests/domain/**/*.test.ts'],
           environment: 'node',
+          // Importing a module does nothing, so that files can share what is loaded: that is most of the time.
+          isolate: false,
           env: { TZ: zone },
           sequence: { shuffle: { files: true, tests: false } },
         },
@@ -35,21 +40,24 @@ export default defineConfig({
           name: 'client',
           include: ['tests/client/**/*.test.{ts,tsx}'],
           environment: 'jsdom',
+          isolate: false,
           setupFiles: ['tests/support/client-setup.ts'],
         },
       },
-      {
+      ...[true, false].map((shared) => ({
         extends: true as const,
         test: {
-          name: 'server',
-          include: ['tests/server/**/*.test.ts', 'tests/db/**/*.test.ts', 'tests/fixtures/**/*.test.ts'],
+          name: shared ? 'server' : 'server alone',
+          include: shared ? ['tests/server/**/*.test.ts', 'tests/db/**/*.test.ts', 'tests/fixtures/**/*.test.ts'] : WITH_STAND_INS,
+          exclude: shared ? WITH_STAND_INS : [],
           environment: 'node',
+          isolate: !shared,
           env: { TZ: 'America/New_York' },
           globalSetup: ['tests/support/database-template.ts'],
           testTimeout: 30_000,
           hookTimeout: 60_000,
         },
-      },
+      })),
       {
         extends: true as const,
         test: {

@@ -32,8 +32,11 @@ const STEPS = /** @type {const} */ ({
 /** @typedef {keyof typeof STEPS} StepName */
 
 const NAMES = /** @type {StepName[]} */ (Object.keys(STEPS));
-/** Names of the steps that run tests, each a vitest project or, for `domain`, one for each time zone. */
+/** Names of the steps that run tests. */
 const TESTS = /** @type {const} */ (['domain', 'client', 'server', 'browser']);
+
+/** The vitest projects of each. */
+const PROJECTS = /** @type {const} */ ({ domain: 'domain *', client: 'client', server: 'server*', browser: 'browser' });
 
 /** Milliseconds for one step: it hangs if it takes longer. */
 const STEP_LIMIT = 20 * 60_000;
@@ -124,7 +127,7 @@ async function performChosen(chosen, forVitest, env, runId) {
     const result = await performTool(
       'vitest',
       [
-        'run', '--project', name === 'domain' ? 'domain *' : name, '--allowOnly=false',
+        'run', '--project', PROJECTS[name], '--allowOnly=false',
         '--reporter=default', '--reporter=json', `--outputFile.json=${report}`, ...forVitest,
       ],
       { ...env, TEST_RUN_ID: `${runId}_${name}` },

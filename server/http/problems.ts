@@ -41,8 +41,9 @@ const NETWORK_CALLS = new Set<unknown>(['connect', 'read', 'write', 'getaddrinfo
 
 const SQLSTATE = /^[0-9A-Z]{5}$/;
 
-/** Failures to reach the database that the driver and the pool report without any code. */
-const LOST_CONNECTION = /^(?:Connection terminated|timeout expired|Client (?:has encountered a connection error|was closed))/;
+/** Failures to reach the database that the driver reports without any code; Knex puts the statement before them. */
+const LOST_CONNECTION =
+  /(?:^| - )(?:Connection terminated(?: unexpectedly| due to connection timeout)?|timeout expired|Client (?:has encountered a connection error|was closed) and is not queryable)$/;
 
 /** Any error as a problem; what nobody expected becomes a bare `internal`. */
 export function problemOf(error: unknown): ProblemError {

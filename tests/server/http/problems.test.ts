@@ -44,6 +44,7 @@ describe('an error as a problem', () => {
 
   test.each([
     'Connection terminated unexpectedly',
+    'select 1 - Connection terminated unexpectedly',
     'timeout expired',
     'Client has encountered a connection error and is not queryable',
     'Client was closed and is not queryable',
