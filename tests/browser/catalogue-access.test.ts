@@ -1,6 +1,6 @@
 import type { Browser } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, inject, it } from 'vitest';
-import { axeFindings, openBrowser, overflows, SCREENS, visit } from '#tests/support/browser.ts';
+import { axeFindings, openBrowser, overflows, pageStands, SCREENS, visit } from '#tests/support/browser.ts';
 
 /** Every page of the catalogue, and some of its states. */
 const PAGES = [
@@ -39,8 +39,8 @@ describe.each([
 ] as const)('%s', (_, screen) => {
   it.each(PAGES)('axe finds nothing on %s, and it is no wider than the screen', async (address) => {
     const { page, end } = await visit(browser, inject('baseUrl'), screen);
-    await page.goto(address, { waitUntil: 'networkidle' });
-    await page.getByRole('heading', { level: 1 }).waitFor();
+    await page.goto(address);
+    await pageStands(page);
     expect(await axeFindings(page)).toEqual([]);
     expect(await overflows(page)).toBe(false);
     await end();
@@ -83,7 +83,8 @@ describe('without a mouse', () => {
 describe('with a thumb', () => {
   it('gives the one thing to do on a casting 44 px', async () => {
     const { page, end } = await visit(browser, inject('baseUrl'), SCREENS.phone);
-    await page.goto('/castings/brackwater-b4406', { waitUntil: 'networkidle' });
+    await page.goto('/castings/brackwater-b4406');
+    await pageStands(page);
     const button = await page.getByRole('link', { name: 'Decode a date on this casting' }).boundingBox();
     expect(button?.height).toBeGreaterThanOrEqual(44);
     await end();
@@ -95,7 +96,8 @@ describe('on paper', () => {
     '%s leaves the controls out and keeps the sources',
     async (address) => {
       const { page, end } = await visit(browser, inject('baseUrl'));
-      await page.goto(address, { waitUntil: 'networkidle' });
+      await page.goto(address);
+      await pageStands(page);
       await page.emulateMedia({ media: 'print' });
       expect(await page.getByRole('link', { name: 'What changed' }).isVisible()).toBe(false);
       expect(await page.getByRole('navigation').isVisible()).toBe(false);

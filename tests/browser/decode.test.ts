@@ -1,6 +1,6 @@
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, inject, it } from 'vitest';
-import { axeFindings, openBrowser, overflows, SCREENS, visit } from '#tests/support/browser.ts';
+import { axeFindings, openBrowser, overflows, pageStands, SCREENS, visit } from '#tests/support/browser.ts';
 import type { Visit } from '#tests/support/browser.ts';
 
 const FULL = '/decode?mark=BBOCB&maker=brackwater-tractor-works&model=brackwater-30-crawler&serial=3C+1207&position=cylinder-block';
@@ -228,7 +228,7 @@ describe.each([
     const { page, complaints, end } = await visit(browser, inject('baseUrl'), options);
     await page.goto(at);
     await page.getByText(shows).first().waitFor();
-    await page.waitForLoadState('networkidle');
+    await pageStands(page);
     expect(await axeFindings(page)).toEqual([]);
     expect(await overflows(page)).toBe(false);
     expect(complaints).toEqual([]);

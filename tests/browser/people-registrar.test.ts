@@ -1,7 +1,7 @@
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, inject, it } from 'vitest';
 import { expectOnlyRefusals, fillSignIn, signInOn, useSitePeople } from '#tests/support/browser-people.ts';
-import { axeFindings, openBrowser, overflows, SCREENS, visit } from '#tests/support/browser.ts';
+import { axeFindings, openBrowser, overflows, pageStands, SCREENS, visit } from '#tests/support/browser.ts';
 import type { Visit } from '#tests/support/browser.ts';
 import { TOTP_SECRET } from '#tests/support/people.ts';
 
@@ -141,8 +141,7 @@ describe.each([
 ])('on %s', (_name, screen) => {
   const expectClean = async (page: Page, address: string): Promise<void> => {
     await page.goto(address);
-    await page.getByRole('heading', { level: 1 }).waitFor();
-    await page.waitForLoadState('networkidle');
+    await pageStands(page);
     expect([address, await axeFindings(page), await overflows(page), await smallTargets(page)]).toEqual([address, [], false, []]);
   };
 
