@@ -16,6 +16,16 @@ import * as secondFactorsCreate from './migrations/0014_second_factors_create.ts
 import * as auditCreate from './migrations/0015_audit_create.ts';
 import * as noticesCreate from './migrations/0020_notices_create.ts';
 import * as mailCreate from './migrations/0021_mail_create.ts';
+import * as wearLimitsCreate from './migrations/0022_wear_limits_create.ts';
+import * as contributionsCreate from './migrations/0023_contributions_create.ts';
+import * as versionsGrow from './migrations/0024_versions_grow.ts';
+import * as factsRetire from './migrations/0025_facts_retire.ts';
+import * as flagsCreate from './migrations/0026_flags_create.ts';
+import * as factNamesCreate from './migrations/0027_fact_names_create.ts';
+import * as machinesCreate from './migrations/0030_machines_create.ts';
+import * as partsCreate from './migrations/0031_parts_create.ts';
+import * as marksCreate from './migrations/0032_marks_create.ts';
+import * as reworksCreate from './migrations/0033_reworks_create.ts';
 
 type NamedMigration = { readonly name: string; readonly migration: Knex.Migration };
 
@@ -41,6 +51,16 @@ const MIGRATIONS: readonly NamedMigration[] = [
   { name: '0015_audit_create', migration: auditCreate },
   { name: '0020_notices_create', migration: noticesCreate },
   { name: '0021_mail_create', migration: mailCreate },
+  { name: '0022_wear_limits_create', migration: wearLimitsCreate },
+  { name: '0023_contributions_create', migration: contributionsCreate },
+  { name: '0024_versions_grow', migration: versionsGrow },
+  { name: '0025_facts_retire', migration: factsRetire },
+  { name: '0026_flags_create', migration: flagsCreate },
+  { name: '0027_fact_names_create', migration: factNamesCreate },
+  { name: '0030_machines_create', migration: machinesCreate },
+  { name: '0031_parts_create', migration: partsCreate },
+  { name: '0032_marks_create', migration: marksCreate },
+  { name: '0033_reworks_create', migration: reworksCreate },
 ];
 
 export const migrationSource: Knex.MigrationSource<NamedMigration> = {

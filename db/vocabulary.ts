@@ -26,3 +26,7 @@ export type AttemptKind = (typeof ATTEMPT_KINDS)[number];
 
 /** What a former member is called. */
 export const FORMER_MEMBER = 'a former member';
+
+/** How far the work on what rests on a changed fact has come. */
+export const REWORK_STATES = ['waiting', 'running', 'done', 'failed'] as const;
+export type ReworkState = (typeof REWORK_STATES)[number];
