@@ -6,8 +6,11 @@ import { createApp } from './http/app.ts';
 import { createLogger } from './http/logging.ts';
 import { startServer } from './http/server.ts';
 import { mailHandlings } from './jobs/mail-handlings.ts';
+import { reworkHandlings } from './jobs/rework-handlings.ts';
+import { takeUpReworks } from './jobs/take-up-reworks.ts';
 import { createMailer } from './mail/mailer.ts';
 import { startJobRunner } from './queue/job-runner.ts';
+import { createCipherCache } from './services/cipher-cache.ts';
 
 const MILLISECONDS_A_DAY = 86_400_000;
 
@@ -16,13 +19,18 @@ async function main(): Promise<void> {
   const logger = createLogger(config.logLevel);
   const knex = connect(config.databaseUrl);
   const mailer = createMailer({ ...config.mail, origin: config.publicOrigin });
-  const jobs = startJobRunner({ url: config.databaseUrl, handlings: mailHandlings({ knex, mailer }), logger });
+  const ciphers = createCipherCache({ onUnusable: (key, faults) => logger.error({ ...key, faults }, 'stored cipher does not compile') });
+  const handlings = [...mailHandlings({ knex, mailer }), ...reworkHandlings({ knex, ciphers })];
+  const jobs = startJobRunner({ url: config.databaseUrl, handlings, logger });
   const app = createApp({ knex, config, logger, clock: todayInUtc, jobs });
   const server = await startServer(app, config);
+  const stopping = new AbortController();
+  const takingUp = takeUpReworks({ knex, logger, signal: stopping.signal });
 
   const stop = async (signal: NodeJS.Signals): Promise<void> => {
     logger.info({ signal }, 'stopping');
-    await Promise.all([server.stop(), jobs.stop()]);
+    stopping.abort();
+    await Promise.all([server.stop(), jobs.stop(), takingUp]);
     await knex.destroy();
     logger.info('stopped');
   };

@@ -25,6 +25,10 @@ export type Person = z.infer<typeof Person>;
 export const LoosePayload = z.record(z.string(), z.json()).meta({ id: 'Payload' });
 export type LoosePayload = z.infer<typeof LoosePayload>;
 
+/** A source as a draft cites it, half or wrongly; `Citation` once it is put forward. */
+export const LooseCitation = z.record(z.string(), z.json()).meta({ id: 'LooseCitation' });
+export type LooseCitation = z.infer<typeof LooseCitation>;
+
 /** `superseded`: entered, and a later version has taken its place since. */
 export const ShownState = z.enum([...CONTRIBUTION_STATES, 'superseded']);
 export type ShownState = z.infer<typeof ShownState>;
@@ -71,7 +75,8 @@ const VersionShown = z.object({ version: z.number().int().positive(), payload: L
 
 export const ContributionPage = ContributionItem.extend({
   payload: LoosePayload,
-  citations: z.array(Citation),
+  /** As drafted; until it is put forward a citation may be half written. */
+  citations: z.array(LoosePayload),
   note: z.string().nullable(),
   /** Grows by one with each saving; a save names the one it was made on. */
   revision: z.number().int(),
@@ -106,7 +111,7 @@ export const ContributionPage = ContributionItem.extend({
 export type ContributionPage = z.infer<typeof ContributionPage>;
 
 const Note = z.string().trim().max(FACT_LIMITS.prose).nullable();
-const DraftCitations = z.array(z.record(z.string(), z.json())).max(FACT_LIMITS.rows);
+const DraftCitations = z.array(LooseCitation).max(FACT_LIMITS.rows);
 
 export const startContribution = endpoint({
   method: 'POST',

@@ -27,12 +27,31 @@ import {
   unsuspendMember,
 } from './admin.ts';
 import { listCastings, readCasting, readCastingHistory } from './castings.ts';
+import { tryCipher } from './cipher-workbench.ts';
 import { listCiphers, readCipher, readCipherHistory } from './ciphers.ts';
+import {
+  commentOnContribution,
+  decideContribution,
+  discardContribution,
+  gatherEvidence,
+  listMyContributions,
+  openContribution,
+  putForward,
+  readContribution,
+  readContributor,
+  readEvidence,
+  saveContribution,
+  startContribution,
+  withdrawContribution,
+} from './contributions.ts';
 import { decodeMark } from './decode.ts';
 import type { Endpoint } from './endpoint.ts';
+import { bringBack, flagFact, listAccounts, listFacts, markRegistersReading, readFactHistory, retireFact } from './facts.ts';
 import { judgeFitOfPart } from './fit.ts';
 import { listMakers, readMaker, readMakerHistory } from './makers.ts';
+import { readMark } from './marks.ts';
 import { listModels, readBuild, readModel, readModelHistory } from './models.ts';
+import { listQueue, listReworks, settleFlag } from './moderation.ts';
 import { chooseNotices, listNotices, markNoticesRead, readNoticeChoices, unsubscribe } from './notices.ts';
 import { listPartTypes, readPartType, readPartTypeHistory } from './part-types.ts';
 import {
@@ -70,6 +89,9 @@ export const ENDPOINTS = {
   listCiphers,
   readCipher,
   readCipherHistory,
+  tryCipher,
+  readMark,
+  listReworks,
   listSerialRanges,
   readSerialRange,
   readSerialRangeHistory,
@@ -115,4 +137,26 @@ export const ENDPOINTS = {
   unsuspendMember,
   endMemberSessions,
   listAudit,
+  startContribution,
+  saveContribution,
+  readContribution,
+  discardContribution,
+  putForward,
+  withdrawContribution,
+  commentOnContribution,
+  readEvidence,
+  gatherEvidence,
+  openContribution,
+  decideContribution,
+  listMyContributions,
+  readContributor,
+  listFacts,
+  listAccounts,
+  readFactHistory,
+  bringBack,
+  retireFact,
+  flagFact,
+  markRegistersReading,
+  listQueue,
+  settleFlag,
 } as const satisfies Record<string, Endpoint>;

@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import { Citation } from './citations.ts';
-import { Id, listAnswer, listQuery, Named } from './common.ts';
+import { Id, listAnswer, listQuery, Named, Slug } from './common.ts';
 import { Difference, FactRef, LoosePayload, Person } from './contributions.ts';
 import { endpoint } from './endpoint.ts';
 import { Kind } from './kinds.ts';
@@ -60,6 +60,8 @@ export const FactHistory = z.object({
   /** Newest first. */
   steps: z.array(HistoryStep),
   names: z.array(FactRef),
+  /** The sources cited in any version. */
+  sources: z.array(z.object({ id: Id, slug: Slug, title: z.string() })),
   /** What rests on it is being worked out again. */
   workingOut: z.boolean(),
   can: z.object({ edit: z.boolean(), bringBack: z.boolean(), retire: z.boolean(), flag: z.boolean() }),

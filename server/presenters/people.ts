@@ -52,7 +52,7 @@ function asJson(document: unknown): Json {
 
 /** Everything on record about a member, as data. Field by field: what is secret or about somebody else is not among them. */
 export function presentMine(mine: MineOnRecord): Record<string, Json> {
-  const { member, makers, sessions, secondFactors, passkeys, notices, noticeChoices, letters, entered, acts } = mine;
+  const { member, makers, sessions, secondFactors, passkeys, notices, noticeChoices, letters, entered, contributions, comments, flags, acts } = mine;
   return {
     account: {
       id: member.id,
@@ -91,6 +91,21 @@ export function presentMine(mine: MineOnRecord): Record<string, Json> {
       })),
       sources: entered.sources.map(({ slug, kind, title, enteredAt, note }) => ({ slug, kind, title, enteredAt, note })),
     },
+    contributions: contributions.map(({ id, kind, subjectId, title, state, payload, citations, note, startedAt, putForwardAt, decidedAt }) => ({
+      contribution: id,
+      kind,
+      fact: subjectId,
+      title,
+      state,
+      payload: asJson(payload),
+      sources: asJson(citations),
+      note,
+      startedAt,
+      putForwardAt,
+      decidedAt,
+    })),
+    comments: comments.map(({ contributionId, at, path, text }) => ({ contribution: contributionId, at, path, text })),
+    flags: flags.map(({ factId, at, reason, outcome }) => ({ fact: factId, at, reason, outcome })),
     acts: acts.map(({ at, act, actorId, subjectId, detail }) => ({
       at,
       act,

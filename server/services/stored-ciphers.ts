@@ -10,19 +10,22 @@ export type StoredCipher = {
   readonly slug: string;
   readonly title: string;
   readonly makerId: string;
+  /** The foundry whose castings for the maker carry it; `null`: not known to depend on the foundry. */
+  readonly foundryId: string | null;
   readonly version: number;
   readonly compiled: CompiledCipher;
 };
 
-/** Which ciphers: one, those of a maker or of the foundry it is, or all there are. */
-export type CipherChoice = { readonly cipherId: string } | { readonly makerId: string } | 'all';
+/** Which ciphers: one, those of a maker or of the foundry it is, those of several such, or all there are. */
+export type CipherChoice = { readonly cipherId: string } | { readonly makerId: string } | { readonly makerIds: readonly string[] } | 'all';
 
 /** The chosen ciphers in force, by title, those that compile. Definitions are fetched and compiled only where the cache lacks them. */
 export async function storedCiphers(choice: CipherChoice, cache: CipherCache, knex: Knex): Promise<readonly StoredCipher[]> {
   const query = Cipher.query(knex).orderBy(['title', 'id']);
   if (choice !== 'all') {
+    const makers = 'makerIds' in choice ? [...choice.makerIds] : 'makerId' in choice ? [choice.makerId] : [];
     if ('cipherId' in choice) void query.where({ id: choice.cipherId });
-    else void query.where({ makerId: choice.makerId }).orWhere({ foundryId: choice.makerId });
+    else void query.whereIn('makerId', makers).orWhereIn('foundryId', makers);
   }
   const ciphers = await query;
   const versions = await CipherVersion.query(knex)
@@ -31,10 +34,10 @@ export async function storedCiphers(choice: CipherChoice, cache: CipherCache, kn
     .select('cipherId', 'number');
   const inForce = new Map(versions.map(({ cipherId, number }) => [cipherId, number]));
   const compiled = await compiledVersions(inForce, cache, knex);
-  return ciphers.flatMap(({ id, slug, title, makerId }) => {
+  return ciphers.flatMap(({ id, slug, title, makerId, foundryId }) => {
     const version = inForce.get(id);
     const ready = compiled.get(id);
-    return version === undefined || ready === undefined ? [] : [{ id, slug, title, makerId, version, compiled: ready }];
+    return version === undefined || ready === undefined ? [] : [{ id, slug, title, makerId, foundryId, version, compiled: ready }];
   });
 }
 

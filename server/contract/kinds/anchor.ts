@@ -8,6 +8,7 @@ export const anchor = kindForm({
   name: 'Dated machine',
   names: 'Dated machines',
   about: 'One serial number whose day is known from a document; it narrows the ranges around it.',
+  page: 'model',
   payload: z
     .strictObject({
       seriesId: Id,

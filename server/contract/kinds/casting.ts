@@ -7,6 +7,7 @@ export const casting = kindForm({
   name: 'Casting',
   names: 'Castings',
   about: 'A casting number: what it is on, when it was poured, and how to tell it.',
+  page: 'casting',
   payload: z.strictObject({
     makerId: Id,
     pouredById: Id.nullable(),

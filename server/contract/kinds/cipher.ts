@@ -10,6 +10,7 @@ export const cipher = kindForm({
   name: 'Cipher',
   names: 'Ciphers',
   about: 'How a maker wrote dates: fields, letters, years in use.',
+  page: 'cipher',
   payload: z.strictObject({
     makerId: Id,
     foundryId: Id.nullable(),

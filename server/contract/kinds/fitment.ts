@@ -8,6 +8,7 @@ export const fitment = kindForm({
   name: 'Fitment',
   names: 'Fitments',
   about: 'Whether a casting belongs in a position, on which serials.',
+  page: 'casting',
   payload: z
     .strictObject({
       positionId: Id,

@@ -11,7 +11,8 @@ export type FactField = {
   /** May be left blank; the payload then holds null, or an empty list. */
   readonly optional?: true;
 } & (
-  | { readonly control: 'line'; readonly mono?: true }
+  /** `blank`: what the payload holds where it was left blank, if that is not null. */
+  | { readonly control: 'line'; readonly mono?: true; readonly blank?: '' }
   | { readonly control: 'prose' }
   /** A JSON number. */
   | { readonly control: 'number'; readonly unit?: string }
@@ -33,6 +34,9 @@ export type FactField = {
   | { readonly control: 'cipher' }
 );
 
+/** What has a page of its own in the catalogue. */
+export type FactPage = 'maker' | 'model' | 'partType' | 'casting' | 'serialRange' | 'cipher';
+
 /**
  * What the register knows of one kind of fact before any database: what a contribution of it says, how that is asked for and shown. What
  * is done about it on the server stands in the module of the same name under `server/services/kinds`.
@@ -44,6 +48,8 @@ export type KindForm<Payload extends z.ZodType = z.ZodType> = {
   readonly names: string;
   /** One sentence: what such an entry is for. */
   readonly about: string;
+  /** On whose page of the catalogue such a fact is read. */
+  readonly page: FactPage;
   /** What whoever works from it should beware of. */
   readonly caution?: { readonly title: string; readonly text: string };
   readonly payload: Payload;

@@ -6,6 +6,7 @@ export const maker = kindForm({
   name: 'Maker',
   names: 'Makers',
   about: 'Who built machines or poured iron, and how they signed it.',
+  page: 'maker',
   payload: z
     .strictObject({
       name: Label,

@@ -9,6 +9,7 @@ export const model = kindForm({
   name: 'Model',
   names: 'Models',
   about: 'A model of machine; its positions make up its checklist.',
+  page: 'model',
   payload: z.strictObject({ makerId: Id, name: Label, machineKind: z.enum(MACHINE_KINDS), made: OpenDays.nullable(), note: OptionalProse }),
   fields: [
     { key: 'makerId', label: 'Maker', control: 'fact', of: 'maker' },

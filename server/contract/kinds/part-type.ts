@@ -6,6 +6,7 @@ export const partType = kindForm({
   name: 'Part type',
   names: 'Part types',
   about: 'What a part is, whoever made it: gear case, flywheel.',
+  page: 'partType',
   payload: z.strictObject({ name: Label, note: OptionalProse, caution: OptionalProse }),
   fields: [
     { key: 'name', label: 'Name', control: 'line' },

@@ -12,6 +12,7 @@ export const position = kindForm({
   name: 'Position',
   names: 'Positions',
   about: 'A place on a model that a part goes; one row of its checklist.',
+  page: 'model',
   payload: z.strictObject({
     modelId: Id,
     partTypeId: Id,

@@ -9,6 +9,7 @@ export const serialRange = kindForm({
   name: 'Serial range',
   names: 'Serial ranges',
   about: 'When the numbers of one stretch of a series were built, by one account.',
+  page: 'serialRange',
   payload: z
     .strictObject({
       seriesId: Id,

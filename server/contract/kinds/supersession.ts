@@ -8,6 +8,7 @@ export const supersession = kindForm({
   name: 'Supersession',
   names: 'Supersessions',
   about: 'Which casting took another’s place, and whether the old one still serves.',
+  page: 'casting',
   payload: z
     .strictObject({ oldId: Id, newId: Id, interchange: z.enum(INTERCHANGES), note: OptionalProse })
     .refine(({ oldId, newId }) => oldId !== newId, { error: 'A casting does not follow itself', path: ['newId'] }),

@@ -14,6 +14,7 @@ export const wearLimit = kindForm({
   name: 'Wear limit',
   names: 'Wear limits',
   about: 'How far a measure of a part may wear before the part is done.',
+  page: 'partType',
   caution: {
     title: 'A limit is not a sign of soundness',
     text: 'Cracked, pressed or lifted parts can fail inside their limits. Have boilers, pressure parts and lifting gear examined by whoever your local code licenses for it.',

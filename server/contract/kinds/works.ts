@@ -7,6 +7,7 @@ export const works = kindForm({
   name: 'Works',
   names: 'Works',
   about: 'One place where a maker built or poured.',
+  page: 'maker',
   payload: z.strictObject({ makerId: Id, name: Label, place: OptionalLabel, note: OptionalProse }),
   fields: [
     { key: 'makerId', label: 'Maker', control: 'fact', of: 'maker' },

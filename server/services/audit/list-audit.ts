@@ -1,9 +1,13 @@
 import type { Knex } from 'knex';
 import type { AuditAct } from '#contract/admin.ts';
 import { AuditRow } from '#db/models/audit-row.ts';
+import { Contribution } from '#db/models/contribution.ts';
+import { Flag } from '#db/models/flag.ts';
 import { Member } from '#db/models/member.ts';
+import { FACT_KINDS } from '#domain/vocabulary.ts';
 import { requireRegistrar } from '#server/policies/staff.ts';
 import type { Viewer } from '#server/policies/viewer.ts';
+import { nameFacts } from '#server/services/facts/name-facts.ts';
 import { listPage } from '#server/services/list-page.ts';
 import type { ListRequest, Order, Page } from '#server/services/list-page.ts';
 import { matchText } from '#server/services/search.ts';
@@ -66,7 +70,17 @@ function narrow(query: Knex.QueryBuilder, { q, actor, subject, act, since, until
 }
 
 async function namesOf(rows: readonly AuditRow[], knex: Knex): Promise<ReadonlyMap<string, string>> {
-  const ids = rows.flatMap(({ subjectKind, subjectId }) => (subjectKind === 'member' && subjectId !== null ? [subjectId] : []));
-  const members = await Member.query(knex).findByIds([...new Set(ids)]);
-  return new Map(members.map(({ id, displayName }) => [id, displayName]));
+  const idsOf = (isOfKind: (kind: string) => boolean): string[] => {
+    const ids = rows.flatMap(({ subjectKind, subjectId }) => (subjectKind !== null && subjectId !== null && isOfKind(subjectKind) ? [subjectId] : []));
+    return [...new Set(ids)];
+  };
+  const members = await Member.query(knex).findByIds(idsOf((kind) => kind === 'member'));
+  // A draft is its author's alone.
+  const contributions = await Contribution.query(knex).findByIds(idsOf((kind) => kind === 'contribution')).whereNot({ state: 'drafted' });
+  const flags = await Flag.query(knex).findByIds(idsOf((kind) => kind === 'flag'));
+  const facts = await nameFacts(idsOf((kind) => FACT_KINDS.some((known) => known === kind)), knex);
+  return new Map([
+    ...members.map(({ id, displayName }) => [id, displayName] as const),
+    ...[...contributions, ...flags, ...facts.values()].map(({ id, title }) => [id, title] as const),
+  ]);
 }

@@ -1,5 +1,6 @@
 import type { Knex } from 'knex';
 import { Authenticator } from '#db/models/authenticator.ts';
+import { Contribution } from '#db/models/contribution.ts';
 import { MemberScope } from '#db/models/member-scope.ts';
 import { Passkey } from '#db/models/passkey.ts';
 import { RecoveryCode } from '#db/models/recovery-code.ts';
@@ -20,8 +21,8 @@ import { lockAccount, requireOwnPassword } from './require-own-password.ts';
 import { endSessionsOf } from './sessions.ts';
 
 /**
- * Closes an account. What the member entered stays, under "a former member"; name, address, password, second factors, sessions, notices
- * and scopes go. The trail keeps the id, which leads to nobody any more.
+ * Closes an account. What the member entered or put forward stays, under "a former member"; name, address, password, second factors,
+ * sessions, drafts, notices and scopes go. The trail keeps the id, which leads to nobody any more.
  *
  * @throws ProblemError `not-allowed` at `password`; `conflict` for the last registrar.
  */
@@ -42,6 +43,8 @@ export async function closeAccount(viewer: MemberViewer, password: string, conte
       await RecoveryCode.query(trx).delete().where({ memberId: viewer.id });
       await WebauthnChallenge.query(trx).delete().where({ memberId: viewer.id });
       await MemberScope.query(trx).delete().where({ memberId: viewer.id });
+      // What was put forward is the register's to decide; what was not is nobody's any more.
+      await Contribution.query(trx).delete().where({ authorId: viewer.id, state: 'drafted' });
       await eraseNoticesOf(viewer.id, trx);
       await eraseMailOf(viewer.id, trx);
       for (const kind of ['password', 'second-factor', 'letter'] as const) await forgiveAttempts(kind, accountKey(holder.email), trx);

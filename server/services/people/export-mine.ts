@@ -1,7 +1,10 @@
 import type { Knex } from 'knex';
 import { AuditRow } from '#db/models/audit-row.ts';
+import { ContributionComment } from '#db/models/contribution-comment.ts';
+import { Contribution } from '#db/models/contribution.ts';
 import { CipherVersion } from '#db/models/cipher-version.ts';
 import { FactVersion } from '#db/models/fact-version.ts';
+import { Flag } from '#db/models/flag.ts';
 import { MailMessage } from '#db/models/mail-message.ts';
 import type { Maker } from '#db/models/maker.ts';
 import { Member } from '#db/models/member.ts';
@@ -30,6 +33,9 @@ export type MineOnRecord = {
   readonly noticeChoices: readonly NoticeChoice[];
   readonly letters: readonly MailMessage[];
   readonly entered: { readonly facts: readonly FactVersion[]; readonly ciphers: readonly CipherVersion[]; readonly sources: readonly Source[] };
+  readonly contributions: readonly Contribution[];
+  readonly comments: readonly ContributionComment[];
+  readonly flags: readonly Flag[];
   /** What they did and what was done to them. */
   readonly acts: readonly AuditRow[];
 };
@@ -60,6 +66,9 @@ export async function exportMine(viewer: MemberViewer, { requestId }: RequestCon
           ciphers: await CipherVersion.query(trx).where({ enteredById: memberId }).orderBy(['enteredAt', 'cipherId', 'number']),
           sources: await Source.query(trx).where({ enteredById: memberId }).orWhere({ memberId }).orderBy(['enteredAt', 'id']),
         },
+        contributions: await Contribution.query(trx).where({ authorId: memberId }).orderBy(['startedAt', 'id']),
+        comments: await ContributionComment.query(trx).where({ authorId: memberId }).orderBy(['at', 'id']),
+        flags: await Flag.query(trx).where({ byId: memberId }).orderBy(['at', 'id']),
         acts: await AuditRow.query(trx).where({ actorId: memberId }).orWhere({ subjectKind: 'member', subjectId: memberId }).orderBy(['at', 'id']),
       };
     },

@@ -1,0 +1,4 @@
+/** What a casting is called. */
+export function castingTitle({ number, pattern }: { readonly number: string; readonly pattern: string | null }): string {
+  return pattern === null ? number : `${number} (${pattern})`;
+}
