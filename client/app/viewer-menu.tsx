@@ -13,7 +13,7 @@ export function ViewerMenu() {
   useOtherTabs();
   const { data: viewer } = useQuery(me());
   return (
-    <nav aria-label="You" className="no-print ml-auto min-h-11">
+    <nav aria-label="You" className="no-print flex min-h-11 min-w-0 flex-1 basis-0 justify-end">
       {viewer === null && <WayIn />}
       {viewer && <Signed viewer={viewer} />}
     </nav>
@@ -24,7 +24,7 @@ function WayIn() {
   const { pathname, search } = useLocation();
   const isDoor = pathname === '/sign-in' || pathname === '/sign-up';
   return (
-    <Link to={paths.signIn(isDoor ? undefined : `${pathname}${search}`)} data-way-in className="nav-link" {...(pathname === '/sign-in' ? { 'aria-current': 'page' } : {})}>
+    <Link to={paths.signIn(isDoor ? undefined : `${pathname}${search}`)} className="nav-link" {...(pathname === '/sign-in' ? { 'aria-current': 'page' } : {})}>
       Sign in
     </Link>
   );
@@ -33,7 +33,6 @@ function WayIn() {
 function Signed({ viewer }: { readonly viewer: Me }) {
   const queryClient = useQueryClient();
   const navigate = useNavigate();
-  const { pathname } = useLocation();
   const leave = useMutation({
     mutationFn: () => call(signOut, {}),
     onSuccess: () => {
@@ -42,14 +41,7 @@ function Signed({ viewer }: { readonly viewer: Me }) {
     },
   });
   return (
-    <ul className="flex flex-wrap items-center gap-x-2 roomy:gap-x-5">
-      {viewer.can.seeMembers && (
-        <li>
-          <Link to={paths.registrarMembers()} className="nav-link" {...(pathname.startsWith('/registrar/') ? { 'aria-current': 'page' } : {})}>
-            Registrar
-          </Link>
-        </li>
-      )}
+    <ul className="flex min-w-0 items-center gap-x-2 roomy:gap-x-5">
       <li>
         <NavLink to={paths.notices()} className="nav-link gap-2">
           <Bell />
@@ -62,14 +54,17 @@ function Signed({ viewer }: { readonly viewer: Me }) {
           )}
         </NavLink>
       </li>
-      <li>
-        <NavLink to={paths.account()} end className="nav-link">
+      <li className="min-w-0">
+        <NavLink to={paths.account()} end className="nav-link max-w-full min-w-0">
           <span className="sr-only">Your account: </span>
-          <span className="max-w-[15ch] truncate">{viewer.displayName}</span>
+          <span aria-hidden="true" className="roomy:hidden">
+            You
+          </span>
+          <span className="max-w-[15ch] truncate max-roomy:sr-only">{viewer.displayName}</span>
         </NavLink>
       </li>
       <li>
-        <button type="button" className="nav-link cursor-pointer" disabled={leave.isPending} onClick={() => leave.mutate()}>
+        <button type="button" className="nav-link cursor-pointer whitespace-nowrap" disabled={leave.isPending} onClick={() => leave.mutate()}>
           Sign out
         </button>
         {leave.isError && (

@@ -38,7 +38,7 @@ export const paths = {
   registrarAudit: (search = '') => `/registrar/audit${search}`,
   contribute: () => '/contribute',
   /** Begins a contribution: of a kind, or a change to a fact. */
-  contributeKind: (kind: FactKind) => `/contribute/${kind}`,
+  contributeKind: (kind: FactKind, search = '') => `/contribute/${kind}${search}`,
   changeFact: (id: string) => `/facts/${id}/change`,
   contribution: (id: string) => `/contributions/${id}`,
   contributionDraft: (id: string) => `/contributions/${id}/draft`,

@@ -82,7 +82,7 @@ export function useContractForm<Schema extends z.ZodType, Answer>({
       onSubmit: (event) => {
         event.preventDefault();
         if (act.isPending) return;
-        const parsed = schema.safeParse(read(new FormData(event.currentTarget)));
+        const parsed = schema.safeParse(read(new FormData(event.currentTarget, event.nativeEvent.submitter)));
         act.reset();
         setRefused(parsed.success ? [] : faultsOf(parsed.error));
         if (parsed.success) act.mutate(parsed.data);

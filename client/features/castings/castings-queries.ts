@@ -1,5 +1,5 @@
 import { keepPreviousData, queryOptions } from '@tanstack/react-query';
-import { listCastings, readCasting, readCastingHistory } from '#contract/castings.ts';
+import { listCastings, readCasting } from '#contract/castings.ts';
 import type { CallInput } from '#contract/endpoint.ts';
 import { call } from '../../lib/call.ts';
 
@@ -9,7 +9,6 @@ const castingKeys = {
   all: ['castings'] as const,
   list: (search: CastingsSearch) => [...castingKeys.all, 'list', search] as const,
   page: (slug: string) => [...castingKeys.all, 'page', slug] as const,
-  history: (slug: string) => [...castingKeys.all, 'history', slug] as const,
 };
 
 export const castingsList = (search: CastingsSearch) =>
@@ -21,9 +20,3 @@ export const castingsList = (search: CastingsSearch) =>
 
 export const castingPage = (slug: string) =>
   queryOptions({ queryKey: castingKeys.page(slug), queryFn: ({ signal }) => call(readCasting, { params: { slug }, signal }) });
-
-export const castingHistory = (slug: string) =>
-  queryOptions({
-    queryKey: castingKeys.history(slug),
-    queryFn: ({ signal }) => call(readCastingHistory, { params: { slug }, signal }),
-  });

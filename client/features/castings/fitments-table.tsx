@@ -6,6 +6,7 @@ import { saySerials } from '../../lib/say-serials.ts';
 import { DataTable } from '../../ui/data-table.tsx';
 import { NoteRef } from '../../ui/margin-notes.tsx';
 import { Verdict } from '../../ui/verdict.tsx';
+import { RowActions } from '../contributions/fact-actions.tsx';
 
 type Props = { readonly fitments: readonly Fitment[]; readonly notesOf: (fitment: Fitment) => readonly number[] };
 
@@ -39,10 +40,11 @@ export function FitmentsTable({ fitments, notesOf }: Props) {
           key: 'verdict',
           header: 'verdict',
           bare: true,
-          cell: ({ verdict, note }) => (
+          cell: ({ id, model, position, verdict, note }) => (
             <>
               <Verdict kind={verdict} />
               {note !== null && <span className="block text-[15px] leading-snug text-slag">{note}</span>}
+              <RowActions factId={id} name={`${position.name}, ${model.name}`} />
             </>
           ),
         },

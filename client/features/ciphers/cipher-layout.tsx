@@ -8,7 +8,7 @@ export function CipherLayout({ definition: { fields, symbolSets } }: { readonly 
     <ol className="flex flex-wrap gap-x-6 gap-y-6">
       {fields.map((field, place) => (
         <li key={place} className="min-w-28 flex-1 basis-36">
-          <Places field={field} />
+          <FieldPlaces field={field} />
           <p className="mt-2 border-t border-graphite pt-1 font-semibold">{capital(sayField(field))}</p>
           <p className="text-[15px] leading-snug text-slag">
             {[sayWidth(field), sayScript(field), ...fieldRemarks(field, symbolSets)].filter((part) => part !== '').join('; ')}
@@ -21,7 +21,8 @@ export function CipherLayout({ definition: { fields, symbolSets } }: { readonly 
 
 const PLACE = 'grid h-12 w-9 place-items-center rounded border border-edge bg-paper font-mono text-[22px] font-bold';
 
-function Places({ field }: { readonly field: FieldDefinition }) {
+/** A place for each glyph a field may take, dashed where it may be missing. */
+export function FieldPlaces({ field }: { readonly field: FieldDefinition }) {
   const { least, most } = widthOf(field);
   const text = field.field === 'literal' ? [...field.text] : [];
   return (

@@ -21,6 +21,9 @@ const FIELDS: Readonly<Record<Exclude<FieldKind, 'other' | 'literal'>, string>> 
   dayOfYear: 'day of the year',
 };
 
+/** Every kind of field, to choose one by. */
+export const FIELD_NAMES: Readonly<Record<FieldKind, string>> = { ...FIELDS, other: 'other detail', literal: 'fixed lettering' };
+
 const WEEKS: Readonly<Record<WeekRule, string>> = {
   iso: 'weeks run Monday to Sunday and belong to the year of their Thursday (ISO 8601)',
   simple: 'days 1 to 7 of the year are week 1, and so on',

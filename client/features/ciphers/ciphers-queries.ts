@@ -1,5 +1,5 @@
 import { keepPreviousData, queryOptions } from '@tanstack/react-query';
-import { listCiphers, readCipher, readCipherHistory } from '#contract/ciphers.ts';
+import { listCiphers, readCipher } from '#contract/ciphers.ts';
 import type { CallInput } from '#contract/endpoint.ts';
 import { call } from '../../lib/call.ts';
 
@@ -9,7 +9,6 @@ const cipherKeys = {
   all: ['ciphers'] as const,
   list: (search: CiphersSearch) => [...cipherKeys.all, 'list', search] as const,
   page: (slug: string) => [...cipherKeys.all, 'page', slug] as const,
-  history: (slug: string) => [...cipherKeys.all, 'history', slug] as const,
 };
 
 export const ciphersList = (search: CiphersSearch) =>
@@ -21,9 +20,3 @@ export const ciphersList = (search: CiphersSearch) =>
 
 export const cipherPage = (slug: string) =>
   queryOptions({ queryKey: cipherKeys.page(slug), queryFn: ({ signal }) => call(readCipher, { params: { slug }, signal }) });
-
-export const cipherHistory = (slug: string) =>
-  queryOptions({
-    queryKey: cipherKeys.history(slug),
-    queryFn: ({ signal }) => call(readCipherHistory, { params: { slug }, signal }),
-  });

@@ -1,5 +1,5 @@
 import { keepPreviousData, queryOptions } from '@tanstack/react-query';
-import { listMakers, readMaker, readMakerHistory } from '#contract/makers.ts';
+import { listMakers, readMaker } from '#contract/makers.ts';
 import type { CallInput } from '#contract/endpoint.ts';
 import { call } from '../../lib/call.ts';
 
@@ -9,7 +9,6 @@ const makerKeys = {
   all: ['makers'] as const,
   list: (search: MakersSearch) => [...makerKeys.all, 'list', search] as const,
   page: (slug: string) => [...makerKeys.all, 'page', slug] as const,
-  history: (slug: string) => [...makerKeys.all, 'history', slug] as const,
 };
 
 export const makersList = (search: MakersSearch) =>
@@ -21,9 +20,3 @@ export const makersList = (search: MakersSearch) =>
 
 export const makerPage = (slug: string) =>
   queryOptions({ queryKey: makerKeys.page(slug), queryFn: ({ signal }) => call(readMaker, { params: { slug }, signal }) });
-
-export const makerHistory = (slug: string) =>
-  queryOptions({
-    queryKey: makerKeys.history(slug),
-    queryFn: ({ signal }) => call(readMakerHistory, { params: { slug }, signal }),
-  });

@@ -1,5 +1,5 @@
 import { keepPreviousData, queryOptions } from '@tanstack/react-query';
-import { listModels, readBuild, readModel, readModelHistory } from '#contract/models.ts';
+import { listModels, readBuild, readModel } from '#contract/models.ts';
 import type { CallInput } from '#contract/endpoint.ts';
 import { call } from '../../lib/call.ts';
 
@@ -9,7 +9,6 @@ const modelKeys = {
   all: ['models'] as const,
   list: (search: ModelsSearch) => [...modelKeys.all, 'list', search] as const,
   page: (slug: string) => [...modelKeys.all, 'page', slug] as const,
-  history: (slug: string) => [...modelKeys.all, 'history', slug] as const,
   build: (slug: string, serial: string) => [...modelKeys.all, 'build', slug, serial] as const,
 };
 
@@ -22,12 +21,6 @@ export const modelsList = (search: ModelsSearch) =>
 
 export const modelPage = (slug: string) =>
   queryOptions({ queryKey: modelKeys.page(slug), queryFn: ({ signal }) => call(readModel, { params: { slug }, signal }) });
-
-export const modelHistory = (slug: string) =>
-  queryOptions({
-    queryKey: modelKeys.history(slug),
-    queryFn: ({ signal }) => call(readModelHistory, { params: { slug }, signal }),
-  });
 
 /** When the model's machine with this serial was built; asked only once a serial is typed. */
 export const modelBuild = (slug: string, serial: string) =>

@@ -1,5 +1,5 @@
 import { keepPreviousData, queryOptions } from '@tanstack/react-query';
-import { listPartTypes, readPartType, readPartTypeHistory } from '#contract/part-types.ts';
+import { listPartTypes, readPartType } from '#contract/part-types.ts';
 import type { CallInput } from '#contract/endpoint.ts';
 import { LIMITS } from '#contract/limits.ts';
 import { call } from '../../lib/call.ts';
@@ -11,7 +11,6 @@ const partTypeKeys = {
   all: ['part-types'] as const,
   list: (search: PartTypesSearch) => [...partTypeKeys.all, 'list', search] as const,
   page: (slug: string) => [...partTypeKeys.all, 'page', slug] as const,
-  history: (slug: string) => [...partTypeKeys.all, 'history', slug] as const,
 };
 
 export const partTypesList = (search: PartTypesSearch) =>
@@ -23,12 +22,6 @@ export const partTypesList = (search: PartTypesSearch) =>
 
 export const partTypePage = (slug: string) =>
   queryOptions({ queryKey: partTypeKeys.page(slug), queryFn: ({ signal }) => call(readPartType, { params: { slug }, signal }) });
-
-export const partTypeHistory = (slug: string) =>
-  queryOptions({
-    queryKey: partTypeKeys.history(slug),
-    queryFn: ({ signal }) => call(readPartTypeHistory, { params: { slug }, signal }),
-  });
 
 /** Every part type, for a filter to choose from. */
 export const partTypesToChoose = () =>

@@ -24,6 +24,19 @@ export const ACT_WORDS: Readonly<Record<AuditAct, string>> = {
   'member.suspended': 'suspended a member',
   'member.unsuspended': 'lifted a suspension',
   'notices.chosen': 'chose which notices come by e-mail',
+  'contribution.started': 'began a contribution',
+  'contribution.discarded': 'threw a draft away',
+  'contribution.put-forward': 'put a contribution forward',
+  'contribution.withdrawn': 'took back a contribution',
+  'contribution.commented': 'commented on a contribution',
+  'contribution.entered': 'entered a contribution',
+  'contribution.sent-back': 'sent a contribution back',
+  'contribution.turned-down': 'turned a contribution down',
+  'fact.brought-back': 'brought an older version back',
+  'fact.retired': 'retired a fact',
+  'fact.flagged': 'flagged a fact',
+  'flag.settled': 'settled a flag',
+  'series.reading-marked': 'marked an account as the register’s reading',
 };
 
 /** What was written down beside an act, part by part: `reason: wrong password`. */

@@ -1,5 +1,5 @@
 import { keepPreviousData, queryOptions } from '@tanstack/react-query';
-import { listSerialRanges, readSerialRange, readSerialRangeHistory } from '#contract/serial-ranges.ts';
+import { listSerialRanges, readSerialRange } from '#contract/serial-ranges.ts';
 import type { CallInput } from '#contract/endpoint.ts';
 import { call } from '../../lib/call.ts';
 
@@ -9,7 +9,6 @@ const serialRangeKeys = {
   all: ['serial-ranges'] as const,
   list: (search: SerialRangesSearch) => [...serialRangeKeys.all, 'list', search] as const,
   page: (slug: string) => [...serialRangeKeys.all, 'page', slug] as const,
-  history: (slug: string) => [...serialRangeKeys.all, 'history', slug] as const,
 };
 
 export const serialRangesList = (search: SerialRangesSearch) =>
@@ -23,10 +22,4 @@ export const serialRangePage = (slug: string) =>
   queryOptions({
     queryKey: serialRangeKeys.page(slug),
     queryFn: ({ signal }) => call(readSerialRange, { params: { slug }, signal }),
-  });
-
-export const serialRangeHistory = (slug: string) =>
-  queryOptions({
-    queryKey: serialRangeKeys.history(slug),
-    queryFn: ({ signal }) => call(readSerialRangeHistory, { params: { slug }, signal }),
   });

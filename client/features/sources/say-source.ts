@@ -1,5 +1,7 @@
 import type { SourceKind } from '#contract/common.ts';
+import { formOf } from '#contract/kinds.ts';
 import type { SourcePage } from '#contract/sources.ts';
+import type { FactKind } from '#domain/vocabulary.ts';
 import { paths } from '../../lib/paths.ts';
 
 const KINDS: Readonly<Record<SourceKind, string>> = {
@@ -16,59 +18,22 @@ export function saySourceKind(kind: SourceKind): string {
   return KINDS[kind];
 }
 
-type BackedFact = SourcePage['behind'][number];
-
-const FACTS: Readonly<Record<BackedFact['kind'], readonly [one: string, many: string]>> = {
-  maker: ['Maker', 'Makers'],
-  works: ['Works', 'Works'],
-  model: ['Model', 'Models'],
-  'part-type': ['Part type', 'Part types'],
-  position: ['Position', 'Positions'],
-  casting: ['Casting', 'Castings'],
-  fitment: ['Where a casting belongs', 'Where castings belong'],
-  supersession: ['What followed what', 'What followed what'],
-  series: ['Series', 'Series'],
-  'serial-range': ['Serial range', 'Serial ranges'],
-  anchor: ['Dated machine', 'Dated machines'],
-  cipher: ['Cipher', 'Ciphers'],
-};
+type BackedFact = Pick<SourcePage['behind'][number], 'kind' | 'slug'>;
 
 /** What facts of a kind are called, for one or for many. */
-export function sayFactKind(kind: BackedFact['kind'], count: number): string {
-  const [one, many] = FACTS[kind];
-  return count === 1 ? one : many;
+export function sayFactKind(kind: FactKind, count: number): string {
+  const { name, names } = formOf(kind);
+  return count === 1 ? name : names;
 }
 
 /** Where a fact stands; null for those that have no page of their own. */
 export function pathOfFact({ kind, slug }: BackedFact): string | null {
-  if (slug === null) return null;
-  switch (kind) {
-    case 'maker':
-    case 'works':
-      return paths.maker(slug);
-    case 'model':
-    case 'position':
-    case 'series':
-    case 'anchor':
-      return paths.model(slug);
-    case 'part-type':
-      return paths.partType(slug);
-    case 'casting':
-    case 'fitment':
-    case 'supersession':
-      return paths.casting(slug);
-    case 'serial-range':
-      return paths.serialRange(slug);
-    case 'cipher':
-      return paths.cipher(slug);
-  }
+  return slug === null ? null : paths[formOf(kind).page](slug);
 }
 
 /** The facts a source stands behind, by kind, in the order the kinds are first met. */
-export function groupFacts(
-  behind: readonly BackedFact[],
-): readonly { readonly kind: BackedFact['kind']; readonly facts: readonly BackedFact[] }[] {
-  const groups = new Map<BackedFact['kind'], BackedFact[]>();
+export function groupFacts<Fact extends BackedFact>(behind: readonly Fact[]): readonly { readonly kind: Fact['kind']; readonly facts: readonly Fact[] }[] {
+  const groups = new Map<Fact['kind'], Fact[]>();
   for (const fact of behind) groups.set(fact.kind, [...(groups.get(fact.kind) ?? []), fact]);
   return [...groups].map(([kind, facts]) => ({ kind, facts }));
 }

@@ -12,6 +12,7 @@ import { castingRule, ciphersInUse } from '../../features/castings/casting-rule.
 import { FitmentsTable } from '../../features/castings/fitments-table.tsx';
 import { sayCasting, sayInterchange } from '../../features/castings/say-casting.ts';
 import { cipherPage } from '../../features/ciphers/ciphers-queries.ts';
+import { FactActions } from '../../features/contributions/fact-actions.tsx';
 import { NOTHING_SAID, writeDecodeState } from '../../features/decode/decode-state.ts';
 import { paths } from '../../lib/paths.ts';
 import { sayOpenSpan, sayYears } from '../../lib/say-date.ts';
@@ -60,6 +61,7 @@ export function Component() {
               <>
                 <SourceNotes notes={notes.beside('what')} />
                 <VersionLinks version={casting.provenance.version} history={paths.castingHistory(casting.slug)} />
+                <FactActions factId={casting.id} />
               </>
             }
           >
@@ -85,6 +87,11 @@ export function Component() {
           )}
           <Block heading="Where it belongs" margin={sourceMargin(notes.beside('fitments'))}>
             <FitmentsTable fitments={inOrderOfVerdict(casting.fitments)} notesOf={({ id }) => notes.numbersOf(id)} />
+            <p className="no-print mt-3">
+              <Link to={paths.contributeKind('fitment', `?castingId=${casting.id}`)} className="inline-flex min-h-11 items-center">
+                Put a fitment forward
+              </Link>
+            </p>
           </Block>
           <Block heading="On the rule">
             <RuleOfCasting casting={casting} />

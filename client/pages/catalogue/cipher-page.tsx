@@ -7,6 +7,7 @@ import { CipherLayout } from '../../features/ciphers/cipher-layout.tsx';
 import { sayYearStart } from '../../features/ciphers/cipher-words.ts';
 import { cipherPage } from '../../features/ciphers/ciphers-queries.ts';
 import { SymbolSets } from '../../features/ciphers/symbol-sets.tsx';
+import { FactActions } from '../../features/contributions/fact-actions.tsx';
 import { NOTHING_SAID, writeDecodeState } from '../../features/decode/decode-state.ts';
 import { sayMachineKind } from '../../features/models/models-table.tsx';
 import { paths } from '../../lib/paths.ts';
@@ -64,6 +65,7 @@ export function Component() {
               <>
                 <SourceNotes notes={notes.beside('layout')} />
                 <VersionLinks version={cipher.version} history={paths.cipherHistory(cipher.slug)} />
+                <FactActions factId={cipher.id} />
               </>
             }
           >

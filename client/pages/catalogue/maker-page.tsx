@@ -3,6 +3,7 @@ import { useSuspenseQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import type { LoaderFunction } from 'react-router-dom';
 import type { MakerPage } from '#contract/makers.ts';
+import { FactActions } from '../../features/contributions/fact-actions.tsx';
 import { makerPage } from '../../features/makers/makers-queries.ts';
 import { sayMachineKind } from '../../features/models/models-table.tsx';
 import { NOTHING_SAID, writeDecodeState } from '../../features/decode/decode-state.ts';
@@ -50,6 +51,7 @@ export function Component() {
               <>
                 <SourceNotes notes={notes.beside('what')} />
                 <VersionLinks version={maker.provenance.version} history={paths.makerHistory(maker.slug)} />
+                <FactActions factId={maker.id} />
               </>
             }
           >

@@ -1,6 +1,7 @@
 import { Link } from 'react-router-dom';
 import type { Position } from '#contract/models.ts';
 import { CastingLink } from '../../features/castings/castings-table.tsx';
+import { RowActions } from '../../features/contributions/fact-actions.tsx';
 import { sayAcceptedLead } from '../../features/decode/say-lead.ts';
 import { paths } from '../../lib/paths.ts';
 import { DataTable } from '../../ui/data-table.tsx';
@@ -40,6 +41,7 @@ export function ModelChecklist({ positions, notesOf, leadNotesOf }: Props) {
                 </span>
               )}
               {position.caution !== null && <PositionCaution caution={position.caution} />}
+              <RowActions factId={position.id} name={position.name} />
             </>
           ),
         },

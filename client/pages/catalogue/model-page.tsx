@@ -3,6 +3,7 @@ import { useSuspenseQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import type { LoaderFunction } from 'react-router-dom';
 import type { BuildAnswer, ModelPage } from '#contract/models.ts';
+import { FactActions } from '../../features/contributions/fact-actions.tsx';
 import { modelPage } from '../../features/models/models-queries.ts';
 import { sayMachineKind } from '../../features/models/models-table.tsx';
 import { saySeries, serialRule } from '../../features/models/serial-rows.ts';
@@ -61,6 +62,7 @@ export function Component() {
                 <SourceNotes notes={notes.beside('model')} />
                 {answered !== undefined && <SourcesOfBuild build={answered} />}
                 <VersionLinks version={model.provenance.version} history={paths.modelHistory(model.slug)} />
+                <FactActions factId={model.id} />
               </>
             }
           >
@@ -70,7 +72,12 @@ export function Component() {
             <Block
               key={one.id}
               heading={model.series.length === 1 ? 'Serials' : `Serials, ${saySeries(one)}`}
-              margin={sourceMargin(notes.beside(one.id))}
+              margin={
+                <>
+                  <SourceNotes notes={notes.beside(one.id)} />
+                  <FactActions factId={one.id} name={`series ${saySeries(one)}`} />
+                </>
+              }
             >
               <ModelSerials series={one} numbersOf={notes.numbersOf} />
             </Block>
@@ -89,6 +96,11 @@ export function Component() {
             <p className="no-print mt-3">
               <Link to={paths.castings(`?model=${model.slug}`)} className="inline-flex min-h-11 items-center">
                 Every casting that goes on it
+              </Link>
+            </p>
+            <p className="no-print">
+              <Link to={paths.contributeKind('position', `?modelId=${model.id}`)} className="inline-flex min-h-11 items-center">
+                Put a position forward
               </Link>
             </p>
           </Block>

@@ -1,6 +1,7 @@
 import { Link } from 'react-router-dom';
 import { accountsOf, saySeries, serialRows } from '../../features/models/serial-rows.ts';
 import type { Account, ModelRange, ModelSeries, SerialRow } from '../../features/models/serial-rows.ts';
+import { RivalAccounts } from '../../features/moderation/rival-accounts.tsx';
 import { sayRangeDates, sayRangeStanding } from '../../features/serial-ranges/say-range.ts';
 import { paths } from '../../lib/paths.ts';
 import { saySpan } from '../../lib/say-date.ts';
@@ -22,6 +23,7 @@ export function ModelSerials({ series, numbersOf }: { readonly series: ModelSeri
   const accounts = accountsOf(series);
   return (
     <>
+      {accounts.length > 1 && <RivalAccounts {...{ series, accounts }} />}
       <DataTable
         caption={`Numbers of ${saySeries(series)}`}
         rows={serialRows(series.ranges)}
@@ -51,7 +53,7 @@ function numbersColumn({ prefix }: ModelSeries): Column<SerialRow> {
 /** `place` among several accounts, counted from 0; null where there is one only. The rule calls them by the same numbers. */
 function accountColumn(account: Account, place: number | null, { prefix }: ModelSeries, numbersOf: Numbers): Column<SerialRow> {
   const header =
-    place === null ? account.title : `${account.title} (${account.preferred ? 'our reading' : `account ${place + 1}`})`;
+    place === null ? account.title : `${account.title} (${account.preferred ? 'the register’s reading' : `account ${place + 1}`})`;
   return {
     key: account.id,
     header,

@@ -2,6 +2,7 @@ import type { QueryClient } from '@tanstack/react-query';
 import { useSuspenseQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import type { LoaderFunction } from 'react-router-dom';
+import { FactActions } from '../../features/contributions/fact-actions.tsx';
 import { partTypePage } from '../../features/part-types/part-types-queries.ts';
 import { paths } from '../../lib/paths.ts';
 import { ButtonLink } from '../../ui/button.tsx';
@@ -40,6 +41,7 @@ export function Component() {
               <>
                 <SourceNotes notes={notes.beside('what')} />
                 <VersionLinks version={type.provenance.version} history={paths.partTypeHistory(type.slug)} />
+                <FactActions factId={type.id} />
               </>
             }
           >

@@ -3,6 +3,7 @@ import { useSuspenseQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import type { LoaderFunction } from 'react-router-dom';
 import type { SerialRangePage } from '#contract/serial-ranges.ts';
+import { FactActions } from '../../features/contributions/fact-actions.tsx';
 import { sayMeaning, sayPrecision, sayRangeStanding } from '../../features/serial-ranges/say-range.ts';
 import { serialRangePage } from '../../features/serial-ranges/serial-ranges-queries.ts';
 import { paths } from '../../lib/paths.ts';
@@ -58,6 +59,7 @@ export function Component() {
               <>
                 <SourceNotes notes={notes.beside('what')} />
                 <VersionLinks version={range.provenance.version} history={paths.serialRangeHistory(range.slug)} />
+                <FactActions factId={range.id} />
               </>
             }
           >

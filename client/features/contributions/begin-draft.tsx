@@ -1,0 +1,37 @@
+import { useMutation, useQueryClient } from '@tanstack/react-query';
+import { useEffect, useRef } from 'react';
+import { useNavigate } from 'react-router-dom';
+import type { ContributionPage } from '#contract/contributions.ts';
+import { paths } from '../../lib/paths.ts';
+import { PageTitle } from '../../ui/page-title.tsx';
+import { PartingLine } from '../../ui/parting-line.tsx';
+import { Skeleton } from '../../ui/skeleton.tsx';
+import { ActTrouble } from '../people/act-trouble.tsx';
+import { contributionPage } from './contributions-queries.ts';
+
+/** Begins a draft, once, and gives its address up for the draft's own, so that Back does not begin another. */
+export function BeginDraft({ title, begin }: { readonly title: string; readonly begin: () => Promise<ContributionPage> }) {
+  const queryClient = useQueryClient();
+  const navigate = useNavigate();
+  const start = useMutation({
+    mutationFn: begin,
+    onSuccess: (answer) => {
+      queryClient.setQueryData(contributionPage(answer.id).queryKey, answer);
+      return navigate(paths.contributionDraft(answer.id), { replace: true });
+    },
+  });
+  const { mutate } = start;
+  const begun = useRef(false);
+  useEffect(() => {
+    if (begun.current) return;
+    begun.current = true;
+    mutate();
+  }, [mutate]);
+  return (
+    <>
+      <PageTitle title={title}>{title}</PageTitle>
+      <PartingLine />
+      <div className="pt-8">{start.isError ? <ActTrouble act={start} /> : <Skeleton lines={6} label="Beginning a draft" />}</div>
+    </>
+  );
+}

@@ -1,0 +1,164 @@
+import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
+import type { UseMutationResult } from '@tanstack/react-query';
+import { useEffect, useRef } from 'react';
+import { Link } from 'react-router-dom';
+import { gatherEvidence } from '#contract/contributions.ts';
+import type { ContributionPage } from '#contract/contributions.ts';
+import type { Evidence, EvidenceFigure, EvidenceGroup, EvidenceItem } from '#contract/evidence.ts';
+import { parseReading } from '#domain/marks/reading.ts';
+import { call } from '../../lib/call.ts';
+import { paths } from '../../lib/paths.ts';
+import { ProblemError } from '../../lib/problem-error.ts';
+import { sayInstant } from '../../lib/say-instant.ts';
+import { sayFigure } from '../../lib/say-number.ts';
+import { FailureNote } from '../../ui/failure-note.tsx';
+import { MarkPlate } from '../../ui/mark-plate.tsx';
+import { Skeleton } from '../../ui/skeleton.tsx';
+import { ActTrouble } from '../people/act-trouble.tsx';
+import { evidenceOf } from './contributions-queries.ts';
+import { pathOfRef } from './path-of-ref.ts';
+
+/** What the record says about a contribution. Who decides on it has it worked out anew on opening; it says what is, and no verdict. */
+export function EvidencePart({ contribution }: { readonly contribution: ContributionPage }) {
+  return contribution.can.decide ? <FreshEvidence key={contribution.revision} id={contribution.id} /> : <KeptEvidence id={contribution.id} />;
+}
+
+function FreshEvidence({ id }: { readonly id: string }) {
+  const queryClient = useQueryClient();
+  const kept = useQuery(evidenceOf(id));
+  const gather = useMutation({
+    mutationFn: () => call(gatherEvidence, { params: { id } }),
+    onSuccess: (answer) => queryClient.setQueryData(evidenceOf(id).queryKey, answer),
+  });
+  const asked = useRef(false);
+  const { mutate } = gather;
+  useEffect(() => {
+    if (asked.current) return;
+    asked.current = true;
+    mutate();
+  }, [mutate]);
+  return (
+    <>
+      {gather.isError && <NotGathered act={gather} />}
+      {gather.isPending && <p className="mb-3 text-slag italic">Working it out on today’s record.</p>}
+      <EvidenceList items={kept.data?.items} error={kept.error} onAgain={() => void kept.refetch()} stale={gather.isPending} />
+    </>
+  );
+}
+
+/** What it says may be taken no longer, as when a casting it names was retired: the register's own words say so. */
+function NotGathered({ act }: { readonly act: UseMutationResult<unknown, Error, void> }) {
+  const { error } = act;
+  return error instanceof ProblemError && error.kind === 'conflict' ? (
+    <p role="alert" className="mb-3 border-l-4 border-scale bg-bed px-4 py-2">
+      {error.message}
+    </p>
+  ) : (
+    <ActTrouble act={act} />
+  );
+}
+
+function KeptEvidence({ id }: { readonly id: string }) {
+  const { data, error, refetch } = useQuery(evidenceOf(id));
+  return <EvidenceList items={data?.items} error={error} onAgain={() => void refetch()} stale={false} />;
+}
+
+type ListProps = { readonly items: readonly Evidence[] | undefined; readonly error: Error | null; readonly onAgain: () => void; readonly stale: boolean };
+
+/** The newest, and the older ones folded away below it. */
+function EvidenceList({ items, error, onAgain, stale }: ListProps) {
+  if (items === undefined) return error === null ? <Skeleton lines={5} label="Loading the evidence" /> : <FailureNote error={error} onAgain={onAgain} />;
+  const [newest, ...older] = items;
+  if (newest === undefined) return <p className="border-y border-rule py-3 text-slag">None was worked out yet.</p>;
+  return (
+    <div className={stale ? 'is-stale-block' : ''} aria-busy={stale}>
+      <OneEvidence evidence={newest} />
+      {older.map((evidence) => (
+        <details key={evidence.id} className="mt-2">
+          <summary className="inline-flex min-h-11 cursor-pointer items-center text-[15px] text-slag underline underline-offset-4">{sayOccasion(evidence)}</summary>
+          <OneEvidence evidence={evidence} />
+        </details>
+      ))}
+    </div>
+  );
+}
+
+function sayOccasion({ occasion, gatheredAt, revision }: Evidence): string {
+  return `${occasion === 'put-forward' ? 'As it was put forward' : 'As a moderator opened it'}, ${sayInstant(gatheredAt)}, on saving ${revision}`;
+}
+
+function OneEvidence({ evidence }: { readonly evidence: Evidence }) {
+  const { groups, figures } = evidence;
+  return (
+    <div>
+      <p className="mb-2 text-[15px] text-slag">{sayOccasion(evidence)}.</p>
+      {groups.length === 0 && figures.length === 0 && <p className="border-y border-rule py-3 text-slag">The record holds nothing that bears on it.</p>}
+      {groups.map((group) => (
+        <Group key={group.code} group={group} />
+      ))}
+      {figures.map((figure) => (
+        <Figure key={figure.code} figure={figure} />
+      ))}
+    </div>
+  );
+}
+
+function Group({ group: { title, count, of, items, unlisted } }: { readonly group: EvidenceGroup }) {
+  return (
+    <section className="border-t border-rule py-3">
+      <h3 className={`flex flex-wrap items-baseline justify-between gap-x-6 ${count === 0 ? '' : 'font-semibold'}`}>
+        {title}
+        <span className="font-normal tabular-nums">{of === null ? sayFigure(count) : `${sayFigure(count)} of ${sayFigure(of)}`}</span>
+      </h3>
+      {items.length > 0 && (
+        <ul className="mt-1">
+          {items.map((item, place) => (
+            <li key={place} className="flex flex-wrap items-center gap-x-3 gap-y-1 py-1.5 text-[15px] leading-snug">
+              <Item item={item} />
+            </li>
+          ))}
+        </ul>
+      )}
+      {unlisted > 0 && <p className="text-[15px] text-slag">{sayFigure(unlisted)} more not listed: on parts that are not public, or past the first of them.</p>}
+    </section>
+  );
+}
+
+function Item({ item: { subject, mark, text } }: { readonly item: EvidenceItem }) {
+  return (
+    <>
+      {mark !== null && <Mark text={mark} />}
+      {subject !== null && <Link to={subject.kind === 'mark' ? paths.mark(subject.id) : pathOfRef(subject)}>{subject.title}</Link>}
+      <span className="wrap-anywhere">{text}</span>
+    </>
+  );
+}
+
+/** As it stands on the iron; in its notation where that can't be read. */
+function Mark({ text }: { readonly text: string }) {
+  const reading = parseReading(text);
+  return reading.ok ? <MarkPlate size="line" reading={reading.value} /> : <span className="font-mono">{text}</span>;
+}
+
+function Figure({ figure: { name, value, unit, working } }: { readonly figure: EvidenceFigure }) {
+  return (
+    <section className="border-t border-rule py-3">
+      <h3 className="flex flex-wrap items-baseline justify-between gap-x-6 font-semibold">
+        {name}
+        <span className="font-normal tabular-nums">{sayValue(value, unit)}</span>
+      </h3>
+      <p className="max-w-measure text-[15px] text-slag">{working}</p>
+    </section>
+  );
+}
+
+function sayValue(value: number, unit: EvidenceFigure['unit']): string {
+  switch (unit) {
+    case 'share':
+      return `${(value * 100).toFixed(1)} %`;
+    case 'count':
+      return sayFigure(value);
+    case 'days':
+      return `${sayFigure(value)} ${value === 1 ? 'day' : 'days'}`;
+  }
+}
