@@ -196,7 +196,7 @@ describe('a model', () => {
     const { page } = here;
     await page.goto('/models/brackwater-30-crawler');
     const serials = page.getByRole('table', { name: 'Numbers of 3C' });
-    await serials.getByRole('columnheader', { name: /our reading/ }).waitFor();
+    await serials.getByRole('columnheader', { name: /the register’s reading/ }).waitFor();
     expect(
       await serials.getByRole('row', { name: /3C.1196–1228.*August 1938 – August 1941.*April 1941.*conjectural/ }).count(),
     ).toBe(1);
@@ -259,7 +259,7 @@ describe('history and sources', () => {
     expect(await page.getByText('In force').count()).toBe(1);
     await page
       .getByRole('table', { name: 'What version 3 changed' })
-      .getByRole('row', { name: 'Used to 31 Dec 1950 31 Dec 1954' })
+      .getByRole('row', { name: 'In use to 31 Dec 1950 31 Dec 1954' })
       .waitFor();
     expect(complaints).toEqual([]);
   });

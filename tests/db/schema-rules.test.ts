@@ -1,6 +1,17 @@
 import { describe, expect, test } from 'vitest';
 import { MACHINE_KINDS } from '#domain/vocabulary.ts';
-import { DATE_MEANINGS, DATE_PRECISIONS, FACT_KINDS, FITMENT_VERDICTS, INTERCHANGES, SOURCE_KINDS } from '#domain/vocabulary.ts';
+import {
+  CONTRIBUTION_STATES,
+  DATE_MEANINGS,
+  DATE_PRECISIONS,
+  DECISIONS,
+  FACT_KINDS,
+  FITMENT_VERDICTS,
+  INTERCHANGES,
+  MEASURE_UNITS,
+  SOURCE_KINDS,
+  WEAR_DIRECTIONS,
+} from '#domain/vocabulary.ts';
 import { RANGE_STANDINGS } from '#domain/serials/build-window.ts';
 import { useDatabase } from '#tests/support/database.ts';
 
@@ -52,13 +63,37 @@ describe('the schema as a whole', () => {
          and exists (select from pg_attribute a where a.attrelid = k.conrelid and a.attnum = any (k.conkey) and not a.attnotnull)
        order by k.conname`);
     expect(checks).toEqual([
+      'cipher_versions_brought_back_check',
+      'cipher_versions_not_ones_own_check',
       'cipher_versions_superseded_check',
+      'contributions_base_check',
+      'contributions_base_version_check',
+      'contributions_decided_at_check',
+      'contributions_decided_check',
+      'contributions_entered_check',
+      'contributions_entered_version_check',
+      'contributions_not_ones_own_check',
+      'contributions_put_forward_at_check',
+      'contributions_put_forward_check',
       'fact_sources_field_check',
+      'fact_versions_brought_back_check',
+      'fact_versions_not_ones_own_check',
       'fact_versions_superseded_check',
       'fitments_numbers_need_series_check',
+      'flags_not_ones_own_check',
+      'flags_outcome_check',
+      'flags_settled_at_check',
+      'flags_settled_check',
       'makers_foundry_mark_check',
       'makers_years_check',
+      'mark_decodings_both_cipher_check',
+      'mark_decodings_cipher_version_check',
+      'mark_decodings_status_total_check',
       'positions_lead_check',
+      'reworks_finished_at_check',
+      'reworks_finished_check',
+      'reworks_total_check',
+      'reworks_version_check',
       'sources_addressee_check',
       'sources_author_check',
       'sources_dated_check',
@@ -68,6 +103,10 @@ describe('the schema as a whole', () => {
       'sources_sheet_check',
       'sources_subject_check',
       'sources_year_check',
+      'wear_limits_as_built_check',
+      'wear_limits_as_built_from_check',
+      'wear_limits_as_built_to_check',
+      'wear_limits_new_part_check',
     ]);
   });
 
@@ -83,6 +122,11 @@ describe('the schema as a whole', () => {
 describe('the words of the columns are those of the vocabulary', () => {
   test.each<[string, string, readonly string[]]>([
     ['facts_kind_check', 'facts', FACT_KINDS],
+    ['contributions_kind_check', 'contributions', FACT_KINDS],
+    ['contributions_state_check', 'contributions', CONTRIBUTION_STATES],
+    ['contribution_decisions_decision_check', 'contribution_decisions', DECISIONS],
+    ['wear_limits_unit_check', 'wear_limits', MEASURE_UNITS],
+    ['wear_limits_direction_check', 'wear_limits', WEAR_DIRECTIONS],
     ['sources_kind_check', 'sources', SOURCE_KINDS],
     ['fitments_verdict_check', 'fitments', FITMENT_VERDICTS],
     ['supersessions_interchange_check', 'supersessions', INTERCHANGES],

@@ -44,6 +44,7 @@ async function enterSomething(memberId: string): Promise<void> {
       kind: fact.kind,
       number: fact.number + 1,
       payload: fact.payload,
+      citations: fact.citations,
       enteredById: memberId,
       enteredAt: '2026-11-30T10:00:00Z',
       reason: 'Seen on the plate',

@@ -73,7 +73,9 @@ export async function addCipher({ definition, ...given }: Partial<Cipher> & { re
   await CipherVersion.query(trx).insert({
     cipherId: id,
     number: 1,
+    header: { slug: cipher.slug, makerId, foundryId: cipher.foundryId, title: cipher.title, machineKind: cipher.machineKind, note: cipher.note },
     definition: definition ?? TEST_CIPHER,
+    citations: [],
     enteredById: await someMember(trx),
     enteredAt: ENTERED_AT,
     reason: 'For a test',
@@ -89,6 +91,7 @@ async function addFact(kind: Exclude<FactKind, 'cipher'>, trx: Knex): Promise<st
     kind,
     number: 1,
     payload: {},
+    citations: [],
     enteredById: await someMember(trx),
     enteredAt: ENTERED_AT,
     reason: 'For a test',
