@@ -2,12 +2,17 @@ import type { Knex } from 'knex';
 import { MachineModel } from '#db/models/machine-model.ts';
 import { PartType } from '#db/models/part-type.ts';
 import { Position } from '#db/models/position.ts';
+import { WearLimit } from '#db/models/wear-limit.ts';
 import { countsBy } from './counts-by.ts';
 import { factRecords } from './fact-records.ts';
 import type { FactRecords } from './fact-records.ts';
 import type { CountedPartType } from './list-part-types.ts';
 
-export type PartTypeOnRecord = CountedPartType & { readonly models: readonly MachineModel[]; readonly records: FactRecords };
+export type PartTypeOnRecord = CountedPartType & {
+  readonly models: readonly MachineModel[];
+  readonly wearLimits: readonly WearLimit[];
+  readonly records: FactRecords;
+};
 
 /** @throws NotFoundError where no part type has the slug. */
 export async function readPartType(slug: string, knex: Knex): Promise<PartTypeOnRecord> {
@@ -16,5 +21,12 @@ export async function readPartType(slug: string, knex: Knex): Promise<PartTypeOn
   const models = await MachineModel.query(knex)
     .whereIn('id', Position.query(knex).where({ partTypeId: partType.id }).select('modelId'))
     .orderBy(['name', 'id']);
-  return { partType, castings: castings.get(partType.id) ?? 0, models, records: await factRecords([partType.id], knex) };
+  const wearLimits = await WearLimit.query(knex).where({ partTypeId: partType.id }).orderBy(['measure', 'id']).withGraphFetched('model');
+  return {
+    partType,
+    castings: castings.get(partType.id) ?? 0,
+    models,
+    wearLimits,
+    records: await factRecords([partType, ...wearLimits].map(({ id }) => id), knex),
+  };
 }

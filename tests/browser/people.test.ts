@@ -255,6 +255,24 @@ describe('second factors', () => {
     await page.getByRole('table', { name: 'Where you are signed in' }).getByText('second factor').waitFor();
   });
 
+  it('begins at the first step again where one signs out before the next page is there', async () => {
+    const { page } = here;
+    const { email } = await people.addMember({ authenticator: true });
+    let letThrough: () => void = () => undefined;
+    const held = new Promise<void>((resolve) => {
+      letThrough = resolve;
+    });
+    await page.route(/\/decode-page[^/]*\.js$/, async (route) => {
+      await held;
+      await route.continue();
+    });
+    await signInOn(page, email, { secret: TOTP_SECRET });
+    await press(page, 'Sign out');
+    await page.getByRole('textbox', { name: 'E-mail address' }).waitFor();
+    letThrough();
+    await page.unrouteAll({ behavior: 'wait' });
+  });
+
   it('adds a passkey, signs in with it alone, and removes it', async () => {
     const { page, complaints } = here;
     const debuggerOf = await page.context().newCDPSession(page);

@@ -4,6 +4,7 @@ import { Link } from 'react-router-dom';
 import type { LoaderFunction } from 'react-router-dom';
 import { FactActions } from '../../features/contributions/fact-actions.tsx';
 import { partTypePage } from '../../features/part-types/part-types-queries.ts';
+import { WearLimitsTable } from '../../features/part-types/wear-limits-table.tsx';
 import { paths } from '../../lib/paths.ts';
 import { ButtonLink } from '../../ui/button.tsx';
 import { NoteRef } from '../../ui/margin-notes.tsx';
@@ -27,6 +28,7 @@ export function Component() {
       block: 'what',
       facts: ['note', 'caution'].map((field) => ({ key: field, provenance: provenanceOfField(type.provenance, field) })),
     },
+    { block: 'wear', facts: type.wearLimits.map(({ id, provenance }) => ({ key: id, provenance })) },
   ]);
   return (
     <>
@@ -64,6 +66,11 @@ export function Component() {
               )}
             </div>
           </Block>
+          {type.wearLimits.length > 0 && (
+            <Block heading="Wear limits" margin={<SourceNotes notes={notes.beside('wear')} />}>
+              <WearLimitsTable limits={type.wearLimits} notesOf={notes.numbersOf} />
+            </Block>
+          )}
           {type.models.length > 0 && (
             <Block heading="Models with a place for it">
               <ul>
