@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { Id, IsoDay, Slug, SourceKind } from './common.ts';
+import { Id, IsoDay } from './common.ts';
 import { CalendarYear, FACT_LIMITS, Label, OptionalLabel, OptionalProse, Prose } from './kinds/kind.ts';
 
 /** A source the register does not have yet; each kind has its own fields. Whose sighting or knowledge it is, is whoever contributes. */
@@ -36,12 +36,3 @@ export const Citation = z
 export type Citation = z.output<typeof Citation>;
 
 export const Citations = z.array(Citation).min(1, 'At least one source').max(FACT_LIMITS.rows);
-
-/** A citation as it is shown: what it is called, and whether the register has it. */
-export const CitationShown = z.object({
-  citation: Citation,
-  title: z.string(),
-  kind: SourceKind,
-  /** Null for a source that is new with this contribution. */
-  slug: Slug.nullable(),
-});

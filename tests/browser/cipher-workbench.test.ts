@@ -133,7 +133,6 @@ describe('a cipher’s whole way', () => {
     await decoded(page, '25 Jul 1957.');
     await moderator.page.goto('/moderation/reworks');
     await moderator.page.getByRole('row').filter({ hasText: TITLE }).filter({ hasText: 'version 3' }).waitFor();
-    expect(await axeFindings(moderator.page)).toEqual([]);
     expectOnlyRefusals([...author.complaints, ...moderator.complaints]);
   }, 120_000);
 });

@@ -1,7 +1,9 @@
 import { useQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
+import { readFactHistory } from '#contract/facts.ts';
 import type { FactHistory } from '#contract/facts.ts';
 import { NotFoundPage } from '../../app/error-page.tsx';
+import { addressOf } from '../../lib/call.ts';
 import { paths } from '../../lib/paths.ts';
 import { ProblemError } from '../../lib/problem-error.ts';
 import { ButtonLink } from '../../ui/button.tsx';
@@ -23,7 +25,15 @@ export function FactHistoryView({ id }: { readonly id: string }) {
   if (history !== undefined) return <View history={history} />;
   // An id that is none is nothing at an address, like one that no fact has.
   if (error instanceof ProblemError && (error.kind === 'not-found' || error.kind === 'invalid')) return <NotFoundPage />;
-  return <div className="pt-8">{error === null ? <Skeleton lines={8} label="Loading the history" /> : <FailureNote error={error} onAgain={() => void refetch()} />}</div>;
+  return (
+    <>
+      <PageTitle title="History">What changed</PageTitle>
+      <PartingLine />
+      <div className="pt-8">
+        {error === null ? <Skeleton lines={8} label="Loading the history" /> : <FailureNote error={error} onAgain={() => void refetch()} />}
+      </div>
+    </>
+  );
 }
 
 function View({ history }: { readonly history: FactHistory }) {
@@ -48,21 +58,29 @@ function View({ history }: { readonly history: FactHistory }) {
       <div className="pt-8">
         <PageGrid>
           {workingOut && <WorkingOut>Decodings and fits that rest on this are gone through; they are shown again once that is done.</WorkingOut>}
-          {(can.edit || can.retire) && (
-            <Block>
-              <div className="no-print flex flex-wrap items-start gap-3">
-                {can.edit && inForce !== null && <ButtonLink to={paths.changeFact(fact.id)}>Put a change forward</ButtonLink>}
-                {can.retire && inForce !== null && (
-                  <InlineStep label="Retire it">{(close) => <RetireForm history={history} inForce={inForce} onDone={close} />}</InlineStep>
-                )}
-              </div>
-            </Block>
-          )}
+          <Block margin={<AsJson id={fact.id} />}>
+            <div className="no-print flex flex-wrap items-start gap-3">
+              {can.edit && inForce !== null && <ButtonLink to={paths.changeFact(fact.id)}>Put a change forward</ButtonLink>}
+              {can.retire && inForce !== null && (
+                <InlineStep label="Retire it">{(close) => <RetireForm history={history} inForce={inForce} onDone={close} />}</InlineStep>
+              )}
+            </div>
+          </Block>
           {steps.map((step, place) => (
             <HistoryStep key={`${step.step} ${step.version}`} step={step} history={history} isFirst={place === steps.length - 1} />
           ))}
         </PageGrid>
       </div>
     </>
+  );
+}
+
+function AsJson({ id }: { readonly id: string }) {
+  return (
+    <p className="no-print text-[15px] leading-snug">
+      <a href={addressOf(readFactHistory.path, { id }, {})} className="inline-block py-2">
+        The same for programs
+      </a>
+    </p>
   );
 }

@@ -1,7 +1,7 @@
 import { Icon } from '../../ui/icon.tsx';
 
 /** Stands where figures would be half old and half new. */
-export function WorkingOut({ children = 'Figures that rest on it stand here again once that is done.' }: { readonly children?: string }) {
+export function WorkingOut({ children }: { readonly children: string }) {
   return (
     <p role="status" className="flex max-w-measure items-baseline gap-2 border-l-4 border-straw bg-bed px-4 py-3">
       <span className="text-straw">

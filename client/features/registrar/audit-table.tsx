@@ -28,7 +28,7 @@ export function AuditTable({ rows, stale, narrow }: Props) {
         },
         {
           key: 'subject',
-          header: 'to whom',
+          header: 'to whom or what',
           cell: ({ subject, actor }) =>
             subject === null ? '' : subject.id === actor?.id ? 'themself' : <Link to={narrow('subject', subject.id)}>{subject.name}</Link>,
         },

@@ -1,14 +1,14 @@
-import { useState } from 'react';
+import { useMemo, useState } from 'react';
 import type { CompiledCipher } from '#domain/ciphers/compiled-cipher.ts';
 import { parseDay, writeDay } from '#domain/dates/day.ts';
 import type { Day } from '#domain/dates/day.ts';
-import { formatDay } from '#domain/dates/format-day.ts';
+import { formatDay, formatSpan } from '#domain/dates/format-day.ts';
 import { parseReading } from '#domain/marks/reading.ts';
 import { Live } from '../../ui/live.tsx';
 import { MarkPlate } from '../../ui/mark-plate.tsx';
 import { TextField } from '../../ui/text-field.tsx';
 import { divisionOf, STEPS, stepped, stripOf } from './day-strip.ts';
-import type { DayWritten, Step } from './day-strip.ts';
+import type { DaysWritten, Step } from './day-strip.ts';
 
 type Props = {
   readonly compiled: CompiledCipher;
@@ -21,17 +21,17 @@ type Props = {
 
 const AROUND = 3;
 
-/** Any day with the mark it would carry, and its neighbours on both sides. */
+/** Any day with the mark it would carry, and what comes before and after it. */
 export function CalendarStrip({ compiled, today, day, onDay, stale }: Props) {
-  const strip = stripOf(compiled, day, AROUND, today);
+  const strip = useMemo(() => stripOf(compiled, day, AROUND, today), [compiled, day, today]);
   const inHand = strip[AROUND];
   return (
     <div className={stale ? 'is-stale-block' : ''}>
       <DayChoice key={day} day={day} onDay={onDay} />
-      {inHand !== undefined && <InHand written={inHand} />}
-      <ol aria-label="The days on either side" className="mt-5 grid border-t border-graphite roomy:grid-cols-7">
+      {inHand !== undefined && <InHand day={day} written={inHand} />}
+      <ol aria-label="What comes before and after" className="mt-5 grid border-t border-graphite roomy:grid-cols-7">
         {strip.map((written) => (
-          <Neighbour key={written.day} written={written} isInHand={written.day === day} onDay={onDay} />
+          <Neighbour key={written.from} written={written} isInHand={written === inHand} onDay={onDay} />
         ))}
       </ol>
     </div>
@@ -82,16 +82,17 @@ function StepButton({ step, by, day, onDay }: { readonly step: Step; readonly by
   );
 }
 
-function InHand({ written: { day, marks } }: { readonly written: DayWritten }) {
+function InHand({ day, written: { from, to, marks } }: { readonly day: Day; readonly written: DaysWritten }) {
   const [mark, ...others] = marks;
   const reading = mark === undefined ? null : parseReading(mark.text);
   if (mark === undefined || reading === null || !reading.ok) {
-    return <p className="mt-2">{formatDay(day)} carries no mark: the cipher was not in use, or has no symbols for it.</p>;
+    return <p className="mt-4">{formatDay(day)} carries no mark: the cipher was not in use, or has no symbols for it.</p>;
   }
   return (
     <>
-      <p className="mb-2">
-        On <strong className="font-semibold">{formatDay(day)}</strong> a casting would be marked
+      <p className="mt-4 mb-2">
+        On <strong className="font-semibold">{formatDay(day)}</strong>
+        {from !== to && <>, as all through {formatSpan({ from, to })},</>} a casting would be marked
       </p>
       <MarkPlate reading={reading.value} divisions={[divisionOf(mark)]} />
       <Live>{`${formatDay(day)}: ${mark.text}`}</Live>
@@ -110,17 +111,19 @@ function InHand({ written: { day, marks } }: { readonly written: DayWritten }) {
   );
 }
 
-function Neighbour({ written: { day, marks }, isInHand, onDay }: { readonly written: DayWritten; readonly isInHand: boolean; readonly onDay: (day: Day) => void }) {
+type NeighbourProps = { readonly written: DaysWritten; readonly isInHand: boolean; readonly onDay: (day: Day) => void };
+
+function Neighbour({ written: { from, to, marks }, isInHand, onDay }: NeighbourProps) {
   const [mark] = marks;
   return (
     <li className="border-b border-rule roomy:border-r roomy:last:border-r-0">
       <button
         type="button"
         {...(isInHand ? { 'aria-current': 'date' } : {})}
-        onClick={() => onDay(day)}
-        className={`flex min-h-11 w-full cursor-pointer items-center gap-x-4 px-2 py-1.5 text-left roomy:flex-col roomy:items-start ${isInHand ? 'bg-bed' : 'hover:bg-bed'}`}
+        onClick={() => onDay(from)}
+        className={`flex size-full min-h-11 cursor-pointer items-center gap-x-4 px-2 py-1.5 text-left roomy:flex-col roomy:items-start ${isInHand ? 'bg-bed' : 'hover:bg-bed'}`}
       >
-        <span className={`min-w-28 text-[15px] roomy:min-w-0 ${isInHand ? 'font-semibold' : 'text-slag'}`}>{formatDay(day)}</span>
+        <span className={`w-36 shrink-0 text-[15px] leading-snug roomy:w-full roomy:grow ${isInHand ? 'font-semibold' : 'text-slag'}`}>{formatSpan({ from, to })}</span>
         <span className="font-mono wrap-anywhere">{mark?.text ?? '–'}</span>
       </button>
     </li>

@@ -7,8 +7,11 @@ import type { Day, DaySpan } from '#domain/dates/day.ts';
 import type { Division } from '../../ui/plate-brackets.tsx';
 import { fieldWord } from '../decode/divisions.ts';
 
-/** A day with the marks it would carry: none outside the cipher's use, or where it has no symbols for it. */
-export type DayWritten = { readonly day: Day; readonly marks: readonly WrittenMark[] };
+/**
+ * Days that would all carry the same marks, as far as they run on: one day, or the week, month or year a cipher tells no closer. No marks
+ * outside the cipher's use, or where it has no symbols; such days stand alone.
+ */
+export type DaysWritten = DaySpan & { readonly marks: readonly WrittenMark[] };
 
 export const STEPS = ['day', 'month', 'year'] as const;
 export type Step = (typeof STEPS)[number];
@@ -16,12 +19,33 @@ export type Step = (typeof STEPS)[number];
 /** Marks worked out of one day; a cipher with a shift letter has as many as there are letters. */
 const MARKS = 12;
 
-/** A day and its neighbours, so many on either side. */
-export function stripOf(cipher: CompiledCipher, day: Day, around: number, today: Day): readonly DayWritten[] {
-  return Array.from({ length: 2 * around + 1 }, (_, place) => {
-    const one = day - around + place;
-    return { day: one, marks: write(one, cipher, { asOf: today, most: MARKS }) };
-  });
+/** No run is followed further than this: a code year, with room. */
+const LONGEST_RUN = 400;
+
+/** The days that go with one day, and so many runs on either side, in their order. */
+export function stripOf(cipher: CompiledCipher, day: Day, around: number, today: Day): readonly DaysWritten[] {
+  const marksOn = (one: Day) => write(one, cipher, { asOf: today, most: MARKS });
+  const inHand = runOver(day, marksOn);
+  const strip = [inHand];
+  for (let place = 0; place < around; place += 1) {
+    strip.unshift(runOver((strip[0] ?? inHand).from - 1, marksOn));
+    strip.push(runOver((strip.at(-1) ?? inHand).to + 1, marksOn));
+  }
+  return strip;
+}
+
+function runOver(day: Day, marksOn: (one: Day) => readonly WrittenMark[]): DaysWritten {
+  const marks = marksOn(day);
+  const texts = textsOf(marks);
+  const isAlike = (one: Day) => marks.length > 0 && textsOf(marksOn(one)) === texts;
+  let [from, to] = [day, day];
+  while (day - from < LONGEST_RUN && isAlike(from - 1)) from -= 1;
+  while (to - day < LONGEST_RUN && isAlike(to + 1)) to += 1;
+  return { from, to, marks };
+}
+
+function textsOf(marks: readonly WrittenMark[]): string {
+  return marks.map(({ text }) => text).join(' | ');
 }
 
 /** The day to begin with: the middle of the cipher's use, so that both neighbours have marks. Null where it is not in use yet. */

@@ -16,7 +16,7 @@ const FIRST_WIDTHS: Readonly<Record<Exclude<FieldKind, 'literal'>, FieldWidth>> 
 
 export type SymbolSetKind = SymbolSet['kind'];
 
-export function freshField(kind: FieldKind): FieldDefinition {
+function freshField(kind: FieldKind): FieldDefinition {
   if (kind === 'literal') return { field: 'literal', text: '' };
   return { field: kind, symbols: 'numerals', width: FIRST_WIDTHS[kind] };
 }
@@ -54,7 +54,7 @@ export function withFieldMoved(definition: CipherDefinition, place: number, by: 
 }
 
 /** Width as it is written: one number where least and most are the same. */
-export function widthFrom(least: number, most: number): FieldWidth {
+function widthFrom(least: number, most: number): FieldWidth {
   return least === most ? least : [least, most];
 }
 

@@ -14,7 +14,7 @@ import { Icon } from '../../ui/icon.tsx';
 import { Live } from '../../ui/live.tsx';
 import { MarkPlate } from '../../ui/mark-plate.tsx';
 import { Skeleton } from '../../ui/skeleton.tsx';
-import { changedFirst, isChanged, READING_WORDS, sayChange, sayOutcome, sayUnlisted } from './trial-words.ts';
+import { isChanged, READING_WORDS, sayChange, sayNotListed, sayOutcome } from './trial-words.ts';
 import type { TrialRow } from './trial-words.ts';
 import { useSettled } from './use-settled.ts';
 import { trialOf } from './workbench-queries.ts';
@@ -61,10 +61,8 @@ export function RecordTrial({ definition, compiled, makerId, foundryId, subjectI
 
 function Answer({ trial, stale }: { readonly trial: Trial; readonly stale: boolean }) {
   const [all, setAll] = useState(false);
-  const { marks, unlisted, inForce } = trial;
-  const rows = changedFirst(trial.rows);
+  const { marks, rows, inForce } = trial;
   const change = sayChange(trial);
-  const hidden = sayUnlisted(unlisted);
   if (marks === 0) return <p className="text-slag">No date mark of this maker is on record yet.</p>;
   return (
     <div className={stale ? 'is-stale-block' : ''} aria-busy={stale}>
@@ -85,7 +83,11 @@ function Answer({ trial, stale }: { readonly trial: Trial; readonly stale: boole
           {all ? `Show the first ${SHOWN_AT_FIRST}` : `Show all ${rows.length}`}
         </Button>
       )}
-      {hidden !== null && <p className="mt-2 text-slag">{hidden}</p>}
+      {sayNotListed(trial).map((said) => (
+        <p key={said} className="mt-2 text-slag">
+          {said}
+        </p>
+      ))}
     </div>
   );
 }

@@ -6,15 +6,13 @@ type Props = {
   readonly least: number;
   readonly most: number;
   readonly onStep: (by: -1 | 1) => void;
-  /** Of the whole, so that a list of faults can point here. */
-  readonly id?: string;
 };
 
 const STEP = 'grid size-11 cursor-pointer place-items-center rounded border border-edge bg-paper text-[22px] leading-none aria-disabled:cursor-not-allowed aria-disabled:text-edge';
 
 /** A small number changed by one at a time, with a thumb or the keyboard. */
-export function Stepper({ label, value, least, most, onStep, id }: Props) {
-  const ownId = useId();
+export function Stepper({ label, value, least, most, onStep }: Props) {
+  const id = useId();
   const button = (by: -1 | 1) => {
     const atEnd = by < 0 ? value <= least : value >= most;
     return (
@@ -27,8 +25,8 @@ export function Stepper({ label, value, least, most, onStep, id }: Props) {
     );
   };
   return (
-    <div {...(id === undefined ? {} : { id, tabIndex: -1 })} role="group" aria-labelledby={ownId} className="flex items-center gap-2 outline-none">
-      <span id={ownId} className="min-w-16 text-slag">
+    <div role="group" aria-labelledby={id} className="flex items-center gap-2">
+      <span id={id} className="min-w-16 text-slag">
         {label}
       </span>
       {button(-1)}

@@ -1,31 +1,28 @@
-import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
+import { useQuery } from '@tanstack/react-query';
 import { Link, useParams } from 'react-router-dom';
-import { withdrawContribution } from '#contract/contributions.ts';
 import type { ContributionPage } from '#contract/contributions.ts';
 import { formOf } from '#contract/kinds.ts';
 import { NotFoundPage } from '../../app/error-page.tsx';
+import { AuthorDeeds } from '../../features/contributions/author-deeds.tsx';
 import { CitationMargin } from '../../features/contributions/citation-margin.tsx';
 import { citationNotes, notesBehind } from '../../features/contributions/citation-notes.ts';
 import { CommentsPart } from '../../features/contributions/comments-part.tsx';
-import { DECISION_WORDS, STATE_WORDS } from '../../features/contributions/contribution-words.ts';
-import { contributionKeys, contributionPage, historyOfFact } from '../../features/contributions/contributions-queries.ts';
+import { STATE_WORDS } from '../../features/contributions/contribution-words.ts';
+import { contributionPage, historyOfFact } from '../../features/contributions/contributions-queries.ts';
 import { DecisionPart } from '../../features/contributions/decision-part.tsx';
+import { DecisionsList } from '../../features/contributions/decisions-list.tsx';
 import { DifferencesTable } from '../../features/contributions/differences-table.tsx';
 import { hasMovedOn } from '../../features/contributions/draft-panels.tsx';
 import { EvidencePart } from '../../features/contributions/evidence-part.tsx';
+import { MovedOnBlock } from '../../features/contributions/moved-on-block.tsx';
 import { OpenWith } from '../../features/contributions/open-with.tsx';
 import { pathOfRef } from '../../features/contributions/path-of-ref.ts';
 import { PayloadList } from '../../features/contributions/payload-list.tsx';
-import { SideBySide } from '../../features/contributions/side-by-side.tsx';
 import { WorkingOut } from '../../features/moderation/working-out.tsx';
-import { ActTrouble } from '../../features/people/act-trouble.tsx';
-import { call } from '../../lib/call.ts';
 import { paths } from '../../lib/paths.ts';
 import { ProblemError } from '../../lib/problem-error.ts';
 import { sayMoment } from '../../lib/say-date.ts';
-import { sayInstant } from '../../lib/say-instant.ts';
 import { capital } from '../../lib/say-number.ts';
-import { Button, ButtonLink } from '../../ui/button.tsx';
 import { Caution } from '../../ui/caution.tsx';
 import { FailureNote } from '../../ui/failure-note.tsx';
 import { Block, PageGrid } from '../../ui/page-grid.tsx';
@@ -79,7 +76,7 @@ function Contribution({ contribution }: { readonly contribution: ContributionPag
         {can.decide && <OpenWith contribution={contribution} />}
         <WorkUnderWay contribution={contribution} />
         <PageGrid>
-          {hasMovedOn(contribution) && isOpen(contribution) && <MovedOn contribution={contribution} />}
+          {hasMovedOn(contribution) && isOpen(contribution) && <MovedOnBlock contribution={contribution} />}
           {isChange && (
             <Block heading="What it changes">
               <DifferencesTable differences={differences} isChange caption="What it changes" />
@@ -131,7 +128,7 @@ function Contribution({ contribution }: { readonly contribution: ContributionPag
           )}
           {decisions.length > 0 && (
             <Block heading="What was decided">
-              <Decisions contribution={contribution} />
+              <DecisionsList contribution={contribution} />
             </Block>
           )}
           {(can.decide || can.seeEvidence) && <DecisionBlock contribution={contribution} />}
@@ -172,75 +169,5 @@ function WorkUnderWay({ contribution: { subject, enteredVersion } }: { readonly 
         <WorkingOut>Decodings and fits that rest on this are gone through; they are shown again once that is done.</WorkingOut>
       </div>
     )
-  );
-}
-
-function MovedOn({ contribution: { kind, base, inForce, payload, names, author, can } }: { readonly contribution: ContributionPage }) {
-  if (base === null) return null;
-  const sides = [
-    { header: `version ${base.version}, begun on`, payload: base.payload },
-    ...(inForce === null ? [] : [{ header: `version ${inForce.version}, in force`, payload: inForce.payload }]),
-    { header: 'this contribution', payload },
-  ];
-  return (
-    <Block heading={inForce === null ? 'The entry was retired meanwhile' : `Version ${inForce.version} was entered meanwhile`}>
-      <p className="mb-3 max-w-measure">
-        {can.edit ? 'You carry yours over to it in the draft.' : `It can’t be entered as it is: ${author.displayName} carries it over to the version in force and puts it forward again.`}
-      </p>
-      <SideBySide kind={kind} caption="The versions and this contribution" sides={sides} names={names} />
-    </Block>
-  );
-}
-
-function Decisions({ contribution: { decisions, enteredVersion, subject } }: { readonly contribution: ContributionPage }) {
-  return (
-    <ol className="max-w-measure border-t border-graphite">
-      {decisions.map(({ decision, reason, by, at }) => (
-        <li key={`${at} ${decision}`} className="border-b border-rule py-3">
-          <p className="font-semibold">
-            {DECISION_WORDS[decision]}
-            {decision === 'enter' && enteredVersion !== null && subject !== null && (
-              <>
-                {' '}
-                as <Link to={paths.factHistory(subject.id)}>version {enteredVersion}</Link>
-              </>
-            )}
-          </p>
-          <p className="whitespace-pre-line wrap-anywhere">{reason}</p>
-          <p className="text-[15px] text-slag">
-            {by.displayName} · <time dateTime={at}>{sayInstant(at)}</time>
-          </p>
-        </li>
-      ))}
-    </ol>
-  );
-}
-
-function AuthorDeeds({ contribution }: { readonly contribution: ContributionPage }) {
-  const { id, revision, state, can } = contribution;
-  const queryClient = useQueryClient();
-  const withdraw = useMutation({
-    mutationFn: () => call(withdrawContribution, { params: { id }, body: { revision } }),
-    onSuccess: (answer) => {
-      queryClient.setQueryData(contributionPage(id).queryKey, answer);
-      return queryClient.invalidateQueries({ queryKey: contributionKeys.mine });
-    },
-  });
-  return (
-    <>
-      <ActTrouble act={withdraw} />
-      <div className="flex flex-wrap gap-3">
-        {can.edit && (
-          <ButtonLink weight="primary" to={paths.contributionDraft(id)}>
-            {state === 'sent-back' ? 'Go on with it' : 'Open the draft'}
-          </ButtonLink>
-        )}
-        {can.withdraw && (
-          <Button disabled={withdraw.isPending} onClick={() => withdraw.mutate()}>
-            Take it back
-          </Button>
-        )}
-      </div>
-    </>
   );
 }

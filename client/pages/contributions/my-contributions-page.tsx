@@ -51,7 +51,7 @@ function Mine({ viewer }: { readonly viewer: Me }) {
           rowKey={({ id }) => id}
           columns={[
             { key: 'title', header: 'Contribution', rowHeader: true, cell: (item) => <Link to={placeOf(item)}>{item.title}</Link> },
-            { key: 'kind', header: 'kind', cell: ({ kind, subject }) => `${subject === null ? 'new ' : 'change of a '}${formOf(kind).name.toLowerCase()}` },
+            { key: 'kind', header: 'kind', cell: ({ kind }) => formOf(kind).name.toLowerCase() },
             { key: 'state', header: 'state', cell: ({ state: now }) => STATE_WORDS[now] },
             { key: 'changed', header: 'last changed', cell: ({ changedAt }) => sayMoment(changedAt) },
           ]}

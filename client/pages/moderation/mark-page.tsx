@@ -27,7 +27,15 @@ export function Component() {
   if (mark !== undefined) return <Mark mark={mark} />;
   // An id that is none is nothing at an address, like one that no public mark has.
   if (error instanceof ProblemError && (error.kind === 'not-found' || error.kind === 'invalid')) return <NotFoundPage />;
-  return <div className="pt-8">{error === null ? <Skeleton lines={6} label="Loading the mark" /> : <FailureNote error={error} onAgain={() => void refetch()} />}</div>;
+  return (
+    <>
+      <PageTitle title="A mark on record">A mark on record</PageTitle>
+      <PartingLine />
+      <div className="pt-8">
+        {error === null ? <Skeleton lines={6} label="Loading the mark" /> : <FailureNote error={error} onAgain={() => void refetch()} />}
+      </div>
+    </>
+  );
 }
 
 function Mark({ mark }: { readonly mark: MarkPage }) {

@@ -10,7 +10,7 @@ export function id(number: number): string {
 }
 
 const person = (number: number, displayName: string): Person => ({ id: id(number), displayName });
-export const HARROW = person(1, 'Harrow Lane');
+const HARROW = person(1, 'Harrow Lane');
 export const UNA = person(2, 'Una Kettlemere');
 
 export const CIPHER: FactRef = { id: id(20), kind: 'cipher', slug: 'brackwater-ten-letter', title: 'Brackwater ten-letter key' };

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { AUDIT_ACTS } from '#contract/admin.ts';
 import { ACT_WORDS, sayDetail } from '#client/features/registrar/audit-words.ts';
+import { pathOfSubject } from '#client/features/registrar/subject-path.ts';
 import { dayShown, endOfDay, startOfDay } from '#client/features/registrar/day-bounds.ts';
 
 describe('days of the trail', () => {
@@ -17,6 +18,20 @@ describe('days of the trail', () => {
     expect(dayShown('2026-03-01T12:00:00Z', 'until')).toBe('2026-03-01');
     expect(dayShown('2026-03-01T00:30:00+02:00', 'since')).toBe('2026-02-28');
     expect(dayShown(undefined, 'since')).toBe('');
+  });
+});
+
+describe('what an act was done to', () => {
+  const id = '018d5bbd-2920-72c2-a4c4-26dc0063c791';
+  it.each([
+    ['member', `/registrar/members/${id}`],
+    ['contribution', `/contributions/${id}`],
+    ['cipher', `/facts/${id}/history`],
+    ['wear-limit', `/facts/${id}/history`],
+    ['flag', null],
+    ['something new', null],
+  ])('a %s stands at %s', (kind, path) => {
+    expect(pathOfSubject({ kind, id })).toBe(path);
   });
 });
 

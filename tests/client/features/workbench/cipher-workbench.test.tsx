@@ -19,7 +19,7 @@ const TRIAL: Trial = {
   rows: [
     {
       item: { subject: { kind: 'mark', id: MARK, title: 'Cylinder block' }, mark: 'RLKON', text: 'on a B4406' },
-      draft: { reading: 'decoded', dates: ['1939-07-25'] },
+      draft: { reading: 'decoded', dates: ['25 Jul 1939'] },
       inForce: { reading: 'impossible', dates: [] },
     },
   ],
@@ -222,7 +222,7 @@ it('reads the record after a pause, and says what changes', async () => {
   const row = screen.getByText('25 Jul 1939').closest('tr')!;
   expect(row.querySelector('a')?.getAttribute('href')).toBe(`/marks/${MARK}`);
   within(row).getByText('changed');
-  screen.getByText('One more is on a part that is not public: counted, not listed.');
+  screen.getByText('1 is on a part that is not public: counted, not listed.');
 });
 
 it('asks nothing of the register while the draft makes no sense, or before a maker is chosen', async () => {

@@ -6,7 +6,7 @@ import { decodeUnderDraft } from '#client/features/workbench/draft-decoding.ts';
 import { compileCipher } from '#domain/ciphers/compile.ts';
 import type { CompiledCipher } from '#domain/ciphers/compiled-cipher.ts';
 import type { CipherDefinition } from '#domain/ciphers/definition.ts';
-import { civilOf, dayOf } from '#domain/dates/day.ts';
+import { civilOf, dayOf, writeDay } from '#domain/dates/day.ts';
 import { parseReading } from '#domain/marks/reading.ts';
 import { TEN } from './samples.ts';
 
@@ -24,14 +24,31 @@ const yearless = compiled({ ...TEN, fields: TEN.fields.slice(0, 2) });
 describe('the strip', () => {
   it('writes a day and its neighbours on both sides', () => {
     const strip = stripOf(ten, dayOf(1939, 7, 25), 1, TODAY);
-    expect(strip.map(({ day, marks }) => [day - dayOf(1939, 7, 25), marks.map(({ text }) => text)])).toEqual([
-      [-1, ['RLCON']],
-      [0, ['RLKON']],
-      [1, ['RLPON']],
+    expect(strip.map(({ from, to, marks }) => [from - dayOf(1939, 7, 25), to - from, marks.map(({ text }) => text)])).toEqual([
+      [-1, 0, ['RLCON']],
+      [0, 0, ['RLKON']],
+      [1, 0, ['RLPON']],
     ]);
   });
   it('leaves days outside the cipher’s use without a mark', () => {
     expect(stripOf(ten, dayOf(1928, 1, 1), 1, TODAY).map(({ marks }) => marks.length)).toEqual([0, 1, 1]);
+  });
+  // A53 of the worked examples: no other year with this letter has a week 53.
+  it('runs days together that carry the same mark', () => {
+    const weeks = compiled({
+      fields: [
+        { field: 'year', symbols: 'years', width: 1 },
+        { field: 'week', symbols: 'numerals', width: 2 },
+      ],
+      symbolSets: { years: { kind: 'values', symbols: { Y: 1930, A: 1931, B: 1932 } } },
+      usedFrom: '1930-01-01',
+      usedTo: '1932-12-31',
+    });
+    expect(stripOf(weeks, dayOf(1931, 12, 31), 1, TODAY).map(({ from, to, marks }) => [writeDay(from), writeDay(to), marks[0]?.text])).toEqual([
+      ['1931-12-21', '1931-12-27', 'A52'],
+      ['1931-12-28', '1932-01-03', 'A53'],
+      ['1932-01-04', '1932-01-10', 'B01'],
+    ]);
   });
   it('names the groups of a mark under its glyphs', () => {
     const [written] = stripOf(ten, dayOf(1939, 7, 25), 0, TODAY);

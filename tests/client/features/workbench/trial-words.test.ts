@@ -1,10 +1,10 @@
 // @vitest-environment node
 import { describe, expect, it } from 'vitest';
-import { changedFirst, isChanged, sayChange, sayOutcome, sayUnlisted } from '#client/features/workbench/trial-words.ts';
+import { isChanged, sayChange, sayNotListed, sayOutcome } from '#client/features/workbench/trial-words.ts';
 import type { TrialRow } from '#client/features/workbench/trial-words.ts';
 
 const row = (draft: TrialRow['draft'], inForce: TrialRow['inForce']): TrialRow => ({ item: { subject: null, mark: 'BBOCB', text: '' }, draft, inForce });
-const ONE = { reading: 'decoded', dates: ['1941-01-13'] } as const;
+const ONE = { reading: 'decoded', dates: ['13 Jan 1941'] } as const;
 const NONE = { reading: 'impossible', dates: [] } as const;
 const said = (readings: { readonly reading: 'decoded' | 'ambiguous' | 'impossible'; readonly dates: readonly string[] }) => sayOutcome({ ...readings, dates: [...readings.dates] });
 
@@ -12,24 +12,15 @@ describe('words of a trial', () => {
   it('say the dates of a mark, the first of many', () => {
     expect(said(ONE)).toBe('13 Jan 1941');
     expect(said(NONE)).toBe('no date');
-    expect(said({ reading: 'ambiguous', dates: ['1919-02-10/1919-02-16', '1939-02-13/1939-02-19'] })).toBe('10–16 Feb 1919; 13–19 Feb 1939');
-    expect(said({ reading: 'ambiguous', dates: ['1928-01-20', '1929-01-20', '1930-01-20', '1931-01-20', '1932-01-20'] })).toBe('20 Jan 1928; 20 Jan 1929; 20 Jan 1930 and 2 more');
-  });
-  it('say dates that are no ISO dates as they are', () => {
-    expect(said({ reading: 'decoded', dates: ['13 Jan 1941'] })).toBe('13 Jan 1941');
+    expect(said({ reading: 'ambiguous', dates: ['10–16 Feb 1919', '13–19 Feb 1939'] })).toBe('10–16 Feb 1919; 13–19 Feb 1939');
+    expect(said({ reading: 'ambiguous', dates: ['20 Jan 1928', '20 Jan 1929', '20 Jan 1930', '20 Jan 1931'] })).toBe('20 Jan 1928; 20 Jan 1929; 20 Jan 1930 and more');
   });
   it('know what comes out otherwise', () => {
     const copy = { ...ONE, dates: [...ONE.dates] };
     expect(isChanged(row(copy, copy))).toBe(false);
     expect(isChanged(row(copy, { ...NONE, dates: [] }))).toBe(true);
-    expect(isChanged(row(copy, { ...copy, dates: ['1941-11-03'] }))).toBe(true);
+    expect(isChanged(row(copy, { ...copy, dates: ['3 Nov 1941'] }))).toBe(true);
     expect(isChanged(row(copy, null))).toBe(false);
-  });
-  it('put what comes out otherwise first, and leave the rest in its order', () => {
-    const same = row({ ...ONE, dates: [...ONE.dates] }, { ...ONE, dates: [...ONE.dates] });
-    const changed = row({ ...ONE, dates: [...ONE.dates] }, { ...NONE, dates: [] });
-    const rows = [{ ...same, item: { ...same.item, text: '1' } }, { ...same, item: { ...same.item, text: '2' } }, changed];
-    expect(changedFirst(rows)).toEqual([changed, rows[0], rows[1]]);
   });
   it('say what changes against the version in force', () => {
     const counts = { decoded: 1, ambiguous: 0, impossible: 0 };
@@ -38,9 +29,12 @@ describe('words of a trial', () => {
     expect(sayChange({ ...trial, changed: 0 })).toBe('Every mark comes out as under the version in force.');
     expect(sayChange({ ...trial, inForce: null })).toBeNull();
   });
-  it('count what is not shown', () => {
-    expect(sayUnlisted(0)).toBeNull();
-    expect(sayUnlisted(1)).toMatch(/^One more is/);
-    expect(sayUnlisted(1500)).toMatch(/^1,500 more are/);
+  it('count what no row shows', () => {
+    const counted = (marks: number, listed: number, unlisted: number) =>
+      sayNotListed({ marks, unlisted, rows: Array.from({ length: listed }, () => row({ ...ONE, dates: [] }, null)) });
+    expect(counted(3, 3, 0)).toEqual([]);
+    expect(counted(3, 2, 1)).toEqual(['1 is on a part that is not public: counted, not listed.']);
+    expect(counted(2000, 25, 500)).toEqual(['The first of each sort are listed; 1,475 more are counted above.', '500 are on parts that are not public: counted, not listed.']);
+    expect(counted(27, 26, 0)).toEqual(['The first of each sort are listed; 1 more is counted above.']);
   });
 });
