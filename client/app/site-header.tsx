@@ -18,7 +18,7 @@ export function SiteHeader({ pathname }: { readonly pathname: string }) {
         <Logo /> Pourbook
       </Link>
       <nav aria-label="Pourbook" className="no-print max-wide:order-last max-wide:w-full">
-        <ul className="flex gap-3 max-wide:-ml-1 roomy:gap-5">
+        <ul className="flex gap-1 text-[15px] max-wide:-ml-1 min-[390px]:gap-2 min-[390px]:text-base roomy:gap-5">
           <li>
             <NavLink to={paths.decode()} className="nav-link">
               Decode

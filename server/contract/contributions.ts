@@ -68,7 +68,7 @@ const Comment = z.object({
   text: z.string(),
 });
 
-export const DecisionShown = z.object({ decision: z.enum(DECISIONS), reason: z.string(), by: Person, at: Moment });
+const DecisionShown = z.object({ decision: z.enum(DECISIONS), reason: z.string(), by: Person, at: Moment });
 
 /** What a version of the fact says, to lay beside the draft. */
 const VersionShown = z.object({ version: z.number().int().positive(), payload: LoosePayload, citations: z.array(Citation) });

@@ -156,6 +156,15 @@ describe('deciding', () => {
       await heading(second.page, /number on the left/);
       await second.page.getByRole('link', { name: 'Put a change forward', exact: true }).click();
       await heading(second.page, /^A change to/);
+
+      await page.goto('/contributions');
+      await page.getByLabel('State', { exact: true }).selectOption('entered');
+      await page.waitForURL(/state=entered/);
+      await page.getByRole('row', { name: /T 902.*casting.*entered/ }).waitFor();
+      await page.getByRole('link', { name: 'the page of what you gave' }).click();
+      await heading(page, 'Author Ash');
+      await page.getByRole('row', { name: /T 902.*in force/ }).waitFor();
+      expect(await axeFindings(page)).toEqual([]);
     } finally {
       await first.end();
       await second.end();

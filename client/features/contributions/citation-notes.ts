@@ -43,7 +43,8 @@ function aboutSource(source: LoosePayload): string {
     const text = said(source[key]);
     return key === 'title' || text === null ? [] : [`${label.toLowerCase()}: ${text}`];
   });
-  return `${[`New with this: ${saySourceKind(kind)}`, ...details].map((part, place) => (place === 0 ? capital(part) : part)).join('; ')}.`;
+  const told = capital([`New with this: ${saySourceKind(kind)}`, ...details].join('; '));
+  return told.endsWith('.') ? told : `${told}.`;
 }
 
 /** The numbers of the notes that name a field, or a row of it. */

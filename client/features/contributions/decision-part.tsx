@@ -11,6 +11,7 @@ import { ActTrouble, SecondFactorOwed } from '../people/act-trouble.tsx';
 import { FormTrouble } from '../people/form-trouble.tsx';
 import type { Explanation } from '../people/form-trouble.tsx';
 import { contributionPage } from './contributions-queries.ts';
+import { hasMovedOn } from './draft-panels.tsx';
 
 const DEEDS: readonly { readonly decision: Decision; readonly press: string }[] = [
   { decision: 'enter', press: 'Enter it' },
@@ -19,7 +20,8 @@ const DEEDS: readonly { readonly decision: Decision; readonly press: string }[] 
 ];
 
 /** A moderator's decision, with its reason. That another was first is said here with what they did, and the page then shows it. */
-export function DecisionPart({ contribution: { id, revision, can } }: { readonly contribution: ContributionPage }) {
+export function DecisionPart({ contribution }: { readonly contribution: ContributionPage }) {
+  const { id, revision, can } = contribution;
   const queryClient = useQueryClient();
   const form = useContractForm({
     schema: decideContribution.body,
@@ -48,7 +50,7 @@ export function DecisionPart({ contribution: { id, revision, can } }: { readonly
         <form {...form.form} className="max-w-measure">
           <ReasonBox {...form.field('reason')} hint="Its author reads it, and it stays with what you decide." />
           <div className="flex flex-wrap gap-3">
-            {DEEDS.map(({ decision, press }, place) => (
+            {DEEDS.filter(({ decision }) => decision !== 'enter' || !hasMovedOn(contribution)).map(({ decision, press }, place) => (
               <Button key={decision} type="submit" name="decision" value={decision} weight={place === 0 ? 'primary' : 'plain'} disabled={form.busy}>
                 {press}
               </Button>

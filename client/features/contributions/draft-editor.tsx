@@ -1,33 +1,19 @@
-import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useMemo, useRef, useState } from 'react';
-import { Link, useNavigate, useSearchParams } from 'react-router-dom';
-import { discardContribution } from '#contract/contributions.ts';
+import { Link, useSearchParams } from 'react-router-dom';
 import type { ContributionPage } from '#contract/contributions.ts';
 import { formOf } from '#contract/kinds.ts';
 import type { FieldFault } from '#contract/problem.ts';
-import { call } from '../../lib/call.ts';
 import { paths } from '../../lib/paths.ts';
 import { Button } from '../../ui/button.tsx';
-import { Caution } from '../../ui/caution.tsx';
-import { ErrorSummary } from '../../ui/error-summary.tsx';
-import type { SummaryFault } from '../../ui/error-summary.tsx';
-import { CONTROL, Field } from '../../ui/field.tsx';
-import { Block, PageGrid } from '../../ui/page-grid.tsx';
 import { PageTitle } from '../../ui/page-title.tsx';
 import { PartingLine } from '../../ui/parting-line.tsx';
-import { ActTrouble } from '../people/act-trouble.tsx';
-import { InlineStep } from '../people/inline-step.tsx';
-import { CitationsEditor } from './citations-editor.tsx';
-import { CommentNotes } from './comments-part.tsx';
-import { contributionKeys } from './contributions-queries.ts';
+import { DiscardDraft } from './discard-draft.tsx';
 import { DraftSurroundingsProvider } from './draft-context.ts';
 import type { DraftSurroundings } from './draft-context.ts';
-import { controlId, controlOf, draftFaults } from './draft-faults.ts';
-import { DraftField } from './draft-field.tsx';
+import { draftFaults } from './draft-faults.ts';
+import { DraftForm } from './draft-form.tsx';
 import { ConflictPanel, hasMovedOn, MovedOnPanel } from './draft-panels.tsx';
 import { DraftPreview } from './draft-preview.tsx';
-import type { DraftStore } from './draft-store.ts';
-import type { Draft } from './draft-values.ts';
 import { SavingLine } from './saving-line.tsx';
 import { useDraftStore } from './use-draft-store.ts';
 import { usePutForward } from './use-put-forward.ts';
@@ -63,7 +49,7 @@ export function DraftEditor({ contribution }: { readonly contribution: Contribut
   const lookOver = async (): Promise<void> => {
     setWasTried(true);
     const isSaved = await store.flush();
-    if (draftFaults(kind, store.state().draft, NONE).length > 0) setTries((before) => before + 1);
+    if (draftFaults(kind, store.state().draft, store.latest().faults).length > 0) setTries((before) => before + 1);
     else if (isSaved) show('preview');
   };
   const heading = subject === null ? `A new ${form.name.toLowerCase()}` : `A change to ${subject.title}`;
@@ -98,100 +84,10 @@ export function DraftEditor({ contribution }: { readonly contribution: Contribut
             </Button>
           </div>
         )}
-        {!isPreview && contribution.can.discard && <Discard id={id} store={store} />}
+        {!isPreview && contribution.can.discard && <DiscardDraft id={id} store={store} />}
       </div>
     </DraftSurroundingsProvider>
   );
-}
-
-type FormProps = {
-  readonly contribution: ContributionPage;
-  readonly draft: Draft;
-  readonly store: DraftStore;
-  readonly faults: readonly FieldFault[];
-  /** Grows with each attempt to go on, so that the summary takes focus again. */
-  readonly tries: number;
-};
-
-/** Room below a control that has focus, for the line that stays at the foot of the screen. */
-const CLEAR_OF_FOOT = '[&_:is(a,button,input,select,summary,textarea)]:scroll-mb-28';
-
-function DraftForm({ contribution, draft, store, faults, tries }: FormProps) {
-  const { kind, decisions, state, comments } = contribution;
-  const form = formOf(kind);
-  const last = decisions.at(-1);
-  return (
-    <div className={CLEAR_OF_FOOT}>
-      {state === 'sent-back' && last !== undefined && (
-        <div className="mb-8 max-w-measure border-l-4 border-temper bg-bed px-4 py-3">
-          <p className="font-semibold">{last.by.displayName} sent it back</p>
-          <p className="whitespace-pre-line wrap-anywhere">{last.reason}</p>
-        </div>
-      )}
-      {form.caution !== undefined && (
-        <div className="mb-8 max-w-measure">
-          <Caution title={form.caution.title}>{form.caution.text}</Caution>
-        </div>
-      )}
-      {tries > 0 && faults.length > 0 && <FaultSummary key={tries} contribution={contribution} draft={draft} faults={faults} />}
-      <PageGrid>
-        <Block heading="What it says" {...(comments.length === 0 ? {} : { margin: <CommentNotes contribution={contribution} /> })}>
-          <div className="space-y-3">
-            {form.fields.map((field) => (
-              <div key={field.key} className={field.control === 'cipher' ? '' : 'max-w-[680px]'}>
-                <DraftField
-                  field={field}
-                  path={['payload', field.key]}
-                  value={draft.payload[field.key]}
-                  onChange={(value) => store.change((now) => ({ ...now, payload: { ...now.payload, [field.key]: value } }))}
-                />
-              </div>
-            ))}
-          </div>
-        </Block>
-        <Block
-          heading="Sources"
-          margin={
-            <p className="text-[15px] leading-snug text-slag">
-              At least one. A book needs its page; what you saw yourself is a sighting; what you simply know is a source too, and says so.
-            </p>
-          }
-        >
-          <CitationsEditor form={form} citations={draft.citations} onChange={(citations) => store.change((now) => ({ ...now, citations }))} />
-        </Block>
-        <Block heading="A word to the moderators">
-          <Field
-            id={controlId(['note'])}
-            className="max-w-[680px]"
-            label="To the moderators (optional)"
-            hint="Becomes the reason that stands with the version."
-            error={faults.find(({ path }) => path[0] === 'note')?.message}
-          >
-            {(control) => (
-              <textarea
-                {...control}
-                rows={3}
-                className={CONTROL}
-                value={draft.note ?? ''}
-                onChange={({ target }) => store.change((now) => ({ ...now, note: target.value === '' ? null : target.value }))}
-              />
-            )}
-          </Field>
-        </Block>
-      </PageGrid>
-    </div>
-  );
-}
-
-/** The faults as they stood when the author last tried to go on; takes focus then, and not with each letter that mends one. */
-function FaultSummary({ contribution, draft, faults }: Pick<FormProps, 'contribution' | 'draft' | 'faults'>) {
-  const [summary] = useState(() =>
-    faults.map(({ path, message }): SummaryFault => {
-      const control = controlOf(contribution.kind, draft, path);
-      return control === null ? { message, controlId: null } : { message: `${control.label}: ${message}`, controlId: control.id };
-    }),
-  );
-  return <ErrorSummary title="It can’t be put forward yet" faults={summary} />;
 }
 
 /** Whether the preview is shown stands in the address; going from one to the other begins at the heading again. */
@@ -209,36 +105,4 @@ function usePreview() {
     isPreview,
     show: (view: 'form' | 'preview') => setParams(view === 'preview' ? { preview: 'true' } : {}, { preventScrollReset: true, replace: view === 'form' }),
   };
-}
-
-function Discard({ id, store }: { readonly id: string; readonly store: DraftStore }) {
-  const queryClient = useQueryClient();
-  const navigate = useNavigate();
-  const discard = useMutation({
-    mutationFn: () => call(discardContribution, { params: { id } }),
-    onSuccess: () => {
-      store.forget();
-      queryClient.removeQueries({ queryKey: contributionKeys.page(id) });
-      void queryClient.invalidateQueries({ queryKey: contributionKeys.mine });
-      void navigate(paths.myContributions());
-    },
-  });
-  return (
-    <div className="mt-6">
-      <InlineStep label="Throw the draft away">
-        {(close) => (
-          <>
-            <p className="mb-3">It is gone for good then; nobody but you has seen it.</p>
-            <ActTrouble act={discard} />
-            <div className="flex flex-wrap gap-3">
-              <Button disabled={discard.isPending} onClick={() => discard.mutate()}>
-                Throw it away for good
-              </Button>
-              <Button onClick={close}>Keep it</Button>
-            </div>
-          </>
-        )}
-      </InlineStep>
-    </div>
-  );
 }

@@ -85,7 +85,7 @@ function within(field: FactField, base: Path, rest: Path): DraftControl {
     case 'days':
     case 'numbers':
     case 'counts':
-      return { id: controlId([...base, rest[0] === 'to' ? 'to' : 'from']), label: field.label };
+      return ofSpan(field, base, rest[0]);
     case 'rows': {
       const [place, key, ...inner] = rest;
       const column = field.columns.find((one) => one.key === key);
@@ -104,6 +104,13 @@ function within(field: FactField, base: Path, rest: Path): DraftControl {
     case 'cipher':
       return { id: controlId(base), label: field.label };
   }
+}
+
+/** A fault of the span as a whole points to its first box. */
+function ofSpan({ label, control }: FactField, base: Path, end: Path[number] | undefined): DraftControl {
+  const [first, last] = control === 'counts' ? ['least', 'most'] : ['first', 'last'];
+  if (end === 'to') return { id: controlId([...base, 'to']), label: `${label}, ${last}` };
+  return { id: controlId([...base, 'from']), label: end === 'from' ? `${label}, ${first}` : label };
 }
 
 const CITATION_LABELS: Readonly<Record<string, string>> = { sourceId: 'source', field: 'stands behind', locator: 'where in it', note: 'remark' };

@@ -35,8 +35,8 @@ type Means = {
 export type DraftStore = {
   readonly subscribe: (listener: () => void) => () => void;
   readonly state: () => DraftState;
-  /** The revision the register has last told of. */
-  readonly revision: () => number;
+  /** How the register last told that it stands. */
+  readonly latest: () => ContributionPage;
   /** Takes up what this device kept from before, once. */
   readonly resume: () => void;
   readonly change: (change: (draft: Draft) => Draft) => void;
@@ -50,7 +50,7 @@ export type DraftStore = {
   readonly forget: () => void;
 };
 
-export function draftOf({ payload, citations, note }: ContributionPage): Draft {
+function draftOf({ payload, citations, note }: ContributionPage): Draft {
   return { payload, citations, note };
 }
 
@@ -60,7 +60,7 @@ export function draftOf({ payload, citations, note }: ContributionPage): Draft {
  */
 export function createDraftStore({ contribution, save, load, shelf, onAnswer }: Means): DraftStore {
   const listeners = new Set<() => void>();
-  let revision = contribution.revision;
+  let latest = contribution;
   let base: number | undefined;
   let changed = false;
   let timer: ReturnType<typeof setTimeout> | undefined;
@@ -77,7 +77,7 @@ export function createDraftStore({ contribution, save, load, shelf, onAnswer }: 
   };
 
   const takeUp = (theirs: ContributionPage): void => {
-    revision = theirs.revision;
+    latest = theirs;
     changed = false;
     shelf.drop();
     set({ draft: draftOf(theirs), saving: { state: 'saved', at: null } });
@@ -87,7 +87,8 @@ export function createDraftStore({ contribution, save, load, shelf, onAnswer }: 
   const compare = async (refusal: Error): Promise<boolean> => {
     const theirs = await load();
     onAnswer(theirs);
-    if (theirs.revision === revision) {
+    if (theirs.revision === latest.revision) {
+      latest = theirs;
       base = undefined;
       set({ saving: { state: 'kept', error: refusal } });
     } else if (isSameDraft(state.draft, draftOf(theirs))) {
@@ -104,8 +105,8 @@ export function createDraftStore({ contribution, save, load, shelf, onAnswer }: 
     changed = false;
     set({ saving: { state: 'waiting' } });
     try {
-      const answer = await save({ revision, draft, ...(base === undefined ? {} : { baseVersion: base }) });
-      revision = answer.revision;
+      const answer = await save({ revision: latest.revision, draft, ...(base === undefined ? {} : { baseVersion: base }) });
+      latest = answer;
       base = undefined;
       onAnswer(answer);
     } catch (error) {
@@ -122,7 +123,7 @@ export function createDraftStore({ contribution, save, load, shelf, onAnswer }: 
       return false;
     }
     if (draft !== state.draft) {
-      shelf.keep({ revision, draft: state.draft });
+      shelf.keep({ revision: latest.revision, draft: state.draft });
       later(PAUSE_MS);
       return false;
     }
@@ -157,7 +158,7 @@ export function createDraftStore({ contribution, save, load, shelf, onAnswer }: 
       return;
     }
     changed = true;
-    const isOurs = kept.revision === revision;
+    const isOurs = kept.revision === latest.revision;
     set({ draft: kept.draft, saving: isOurs ? { state: 'waiting' } : { state: 'conflict', theirs: contribution } });
     if (isOurs) later(0);
   };
@@ -168,12 +169,12 @@ export function createDraftStore({ contribution, save, load, shelf, onAnswer }: 
       return () => void listeners.delete(listener);
     },
     state: () => state,
-    revision: () => revision,
+    latest: () => latest,
     resume,
     change: (change) => {
       const draft = change(state.draft);
       changed = true;
-      shelf.keep({ revision, draft });
+      shelf.keep({ revision: latest.revision, draft });
       const isHeldUp = state.saving.state === 'conflict';
       set(isHeldUp ? { draft } : { draft, saving: { state: 'waiting' } });
       if (sending === null && !isHeldUp) later(PAUSE_MS);
@@ -186,8 +187,8 @@ export function createDraftStore({ contribution, save, load, shelf, onAnswer }: 
         takeUp(theirs);
         return;
       }
-      revision = theirs.revision;
-      shelf.keep({ revision, draft: state.draft });
+      latest = theirs;
+      shelf.keep({ revision: latest.revision, draft: state.draft });
       set({ saving: { state: 'waiting' } });
       void send();
     },

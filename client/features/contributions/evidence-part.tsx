@@ -20,10 +20,13 @@ import { pathOfRef } from './path-of-ref.ts';
 
 /** What the record says about a contribution. Who decides on it has it worked out anew on opening; it says what is, and no verdict. */
 export function EvidencePart({ contribution }: { readonly contribution: ContributionPage }) {
-  return contribution.can.decide ? <FreshEvidence key={contribution.revision} id={contribution.id} /> : <KeptEvidence id={contribution.id} />;
+  const { id, revision, can } = contribution;
+  return can.decide ? <FreshEvidence key={revision} {...{ id, revision }} /> : <KeptEvidence {...{ id, revision }} />;
 }
 
-function FreshEvidence({ id }: { readonly id: string }) {
+type Of = { readonly id: string; /** What is shown of it now. */ readonly revision: number };
+
+function FreshEvidence({ id, revision }: Of) {
   const queryClient = useQueryClient();
   const kept = useQuery(evidenceOf(id));
   const gather = useMutation({
@@ -41,7 +44,7 @@ function FreshEvidence({ id }: { readonly id: string }) {
     <>
       {gather.isError && <NotGathered act={gather} />}
       {gather.isPending && <p className="mb-3 text-slag italic">Working it out on today’s record.</p>}
-      <EvidenceList items={kept.data?.items} error={kept.error} onAgain={() => void kept.refetch()} stale={gather.isPending} />
+      <EvidenceList items={kept.data?.items} error={kept.error} onAgain={() => void kept.refetch()} stale={gather.isPending} revision={revision} />
     </>
   );
 }
@@ -58,40 +61,41 @@ function NotGathered({ act }: { readonly act: UseMutationResult<unknown, Error, 
   );
 }
 
-function KeptEvidence({ id }: { readonly id: string }) {
+function KeptEvidence({ id, revision }: Of) {
   const { data, error, refetch } = useQuery(evidenceOf(id));
-  return <EvidenceList items={data?.items} error={error} onAgain={() => void refetch()} stale={false} />;
+  return <EvidenceList items={data?.items} error={error} onAgain={() => void refetch()} stale={false} revision={revision} />;
 }
 
-type ListProps = { readonly items: readonly Evidence[] | undefined; readonly error: Error | null; readonly onAgain: () => void; readonly stale: boolean };
+type ListProps = { readonly items: readonly Evidence[] | undefined; readonly error: Error | null; readonly onAgain: () => void; readonly stale: boolean; readonly revision: number };
 
 /** The newest, and the older ones folded away below it. */
-function EvidenceList({ items, error, onAgain, stale }: ListProps) {
+function EvidenceList({ items, error, onAgain, stale, revision }: ListProps) {
   if (items === undefined) return error === null ? <Skeleton lines={5} label="Loading the evidence" /> : <FailureNote error={error} onAgain={onAgain} />;
   const [newest, ...older] = items;
   if (newest === undefined) return <p className="border-y border-rule py-3 text-slag">None was worked out yet.</p>;
   return (
     <div className={stale ? 'is-stale-block' : ''} aria-busy={stale}>
-      <OneEvidence evidence={newest} />
+      <OneEvidence evidence={newest} revision={revision} />
       {older.map((evidence) => (
         <details key={evidence.id} className="mt-2">
-          <summary className="inline-flex min-h-11 cursor-pointer items-center text-[15px] text-slag underline underline-offset-4">{sayOccasion(evidence)}</summary>
-          <OneEvidence evidence={evidence} />
+          <summary className="inline-flex min-h-11 cursor-pointer items-center text-[15px] text-slag underline underline-offset-4">{sayOccasion(evidence, revision)}</summary>
+          <OneEvidence evidence={evidence} revision={revision} />
         </details>
       ))}
     </div>
   );
 }
 
-function sayOccasion({ occasion, gatheredAt, revision }: Evidence): string {
-  return `${occasion === 'put-forward' ? 'As it was put forward' : 'As a moderator opened it'}, ${sayInstant(gatheredAt)}, on saving ${revision}`;
+/** `As it was put forward, 4 Mar 2026, 10:07 UTC`; that it was about other words than those shown, where it was. */
+function sayOccasion({ occasion, gatheredAt, revision: then }: Evidence, revision: number): string {
+  return `${occasion === 'put-forward' ? 'As it was put forward' : 'As a moderator opened it'}, ${sayInstant(gatheredAt)}${then === revision ? '' : ', of what it said then'}`;
 }
 
-function OneEvidence({ evidence }: { readonly evidence: Evidence }) {
+function OneEvidence({ evidence, revision }: { readonly evidence: Evidence; readonly revision: number }) {
   const { groups, figures } = evidence;
   return (
     <div>
-      <p className="mb-2 text-[15px] text-slag">{sayOccasion(evidence)}.</p>
+      <p className="mb-2 text-[15px] text-slag">{sayOccasion(evidence, revision)}.</p>
       {groups.length === 0 && figures.length === 0 && <p className="border-y border-rule py-3 text-slag">The record holds nothing that bears on it.</p>}
       {groups.map((group) => (
         <Group key={group.code} group={group} />
@@ -104,6 +108,7 @@ function OneEvidence({ evidence }: { readonly evidence: Evidence }) {
 }
 
 function Group({ group: { title, count, of, items, unlisted } }: { readonly group: EvidenceGroup }) {
+  const more = Math.max(0, count - items.length - unlisted);
   return (
     <section className="border-t border-rule py-3">
       <h3 className={`flex flex-wrap items-baseline justify-between gap-x-6 ${count === 0 ? '' : 'font-semibold'}`}>
@@ -119,7 +124,11 @@ function Group({ group: { title, count, of, items, unlisted } }: { readonly grou
           ))}
         </ul>
       )}
-      {unlisted > 0 && <p className="text-[15px] text-slag">{sayFigure(unlisted)} more not listed: on parts that are not public, or past the first of them.</p>}
+      {unlisted + more > 0 && (
+        <p className="text-[15px] text-slag">
+          {[...(more > 0 ? [`${sayFigure(more)} more.`] : []), ...(unlisted > 0 ? [`${sayFigure(unlisted)} on parts that are not public: counted, not listed.`] : [])].join(' ')}
+        </p>
+      )}
     </section>
   );
 }

@@ -1,3 +1,4 @@
+import { useQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import { CipherDefinitionSchema } from '#contract/cipher.ts';
 import type { FactRef, LoosePayload } from '#contract/contributions.ts';
@@ -10,6 +11,7 @@ import { today } from '../../lib/today.ts';
 import { NoteRef } from '../../ui/margin-notes.tsx';
 import { CipherLayout } from '../ciphers/cipher-layout.tsx';
 import { SymbolSets } from '../ciphers/symbol-sets.tsx';
+import { accountNames } from './contributions-queries.ts';
 import { endsOf, isBlank, rowsOf, textOf } from './draft-values.ts';
 import type { Value } from './draft-values.ts';
 import { pathOfRef } from './path-of-ref.ts';
@@ -69,7 +71,7 @@ export function PayloadValue({ field, value, names }: { readonly field: FactFiel
     case 'fact':
       return <Named id={textOf(value)} names={names} />;
     case 'account':
-      return names.find(({ id }) => id === value)?.title ?? 'an account on record';
+      return <AccountName id={textOf(value)} />;
     case 'rows':
       return <Rows field={field} value={value} names={names} />;
     case 'cipher':
@@ -80,6 +82,11 @@ export function PayloadValue({ field, value, names }: { readonly field: FactFiel
 function Named({ id, names }: { readonly id: string; readonly names: Names }) {
   const ref = names.find((one) => one.id === id);
   return ref === undefined ? 'an entry on record' : <Link to={pathOfRef(ref)}>{ref.title}</Link>;
+}
+
+/** Accounts are no facts, and so not among the names. */
+function AccountName({ id }: { readonly id: string }) {
+  return useQuery(accountNames(true)).data?.find((account) => account.id === id)?.title ?? 'an account on record';
 }
 
 function Rows({ field, value, names }: { readonly field: Extract<FactField, { readonly control: 'rows' }>; readonly value: Value | undefined; readonly names: Names }) {

@@ -14,7 +14,7 @@ export function usePutForward(id: string, store: DraftStore, onRefused: () => vo
   return useMutation({
     mutationFn: async () => {
       await store.flush();
-      return call(putForward, { params: { id }, body: { revision: store.revision() } });
+      return call(putForward, { params: { id }, body: { revision: store.latest().revision } });
     },
     onSuccess: (answer) => {
       store.forget();

@@ -122,7 +122,7 @@ describe('for whoever decides', () => {
     expect(screen.getByRole('link', { name: 'a gear case' }).getAttribute('href')).toBe(`/marks/${ID}`);
     expect(screen.getByRole('link', { name: 'B 5120' }).getAttribute('href')).toBe('/castings/example-b-5120');
     expect(screen.getByRole('link', { name: 'No. 1207' }).getAttribute('href')).toBe(`/facts/${OTHER_ID}/history`);
-    screen.getByText(/9 more not listed/);
+    screen.getByText('9 on parts that are not public: counted, not listed.');
     screen.getByText('21.3 %');
     screen.getByText('Of 200 random keys the middle one dates 21.3 %.');
   });

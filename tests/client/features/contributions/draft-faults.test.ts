@@ -56,7 +56,8 @@ describe('controlOf', () => {
   it.each([
     [['payload', 'number'], 'draft-payload-number', 'Casting number'],
     [['payload', 'made'], 'draft-payload-made-from', 'Poured'],
-    [['payload', 'made', 'to'], 'draft-payload-made-to', 'Poured'],
+    [['payload', 'made', 'from'], 'draft-payload-made-from', 'Poured, first'],
+    [['payload', 'made', 'to'], 'draft-payload-made-to', 'Poured, last'],
     [['payload', 'tells', 1, 'tell'], 'draft-payload-tells-1-tell', 'Tells, 2: what is seen there'],
     [['payload', 'tells'], 'draft-payload-tells', 'Tells'],
     [['citations'], 'draft-citations', 'Sources'],

@@ -177,7 +177,7 @@ describe('saved elsewhere meanwhile', () => {
     const { store, shelf, sent } = await inConflict();
     store.settle('theirs');
     expect(store.state().draft.payload['number']).toBe('C 7');
-    expect(store.revision()).toBe(5);
+    expect(store.latest().revision).toBe(5);
     expect(shelf.read()).toBeNull();
     expect(sent()).toHaveLength(1);
   });
@@ -188,7 +188,7 @@ describe('saved elsewhere meanwhile', () => {
     type('B');
     await pass(1000);
     expect(store.state().saving.state).toBe('saved');
-    expect(store.revision()).toBe(5);
+    expect(store.latest().revision).toBe(5);
   });
 });
 
