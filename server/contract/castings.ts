@@ -16,6 +16,7 @@ export const CastingItem = CastingRef.extend({
 export type CastingItem = z.infer<typeof CastingItem>;
 
 const Succession = z.object({
+  id: Id,
   casting: CastingRef,
   /** `both-ways`: each fits in place of the other. `new-for-old`: only the newer in place of the older. */
   interchange: z.enum(INTERCHANGES),

@@ -21,7 +21,7 @@ export const MakerPage = MakerItem.extend({
   /** How the foundry signed its castings; null for none on record. */
   foundryMark: z.string().nullable(),
   note: z.string().nullable(),
-  works: z.array(z.object({ slug: Slug, name: z.string(), place: z.string().nullable(), provenance: Provenance })),
+  works: z.array(z.object({ id: Id, slug: Slug, name: z.string(), place: z.string().nullable(), provenance: Provenance })),
   modelList: z.array(Named.extend({ kindOfMachine: z.string(), made: OpenSpan })),
   cipherList: z.array(
     z.object({ slug: Slug, title: z.string(), foundry: Named.nullable(), used: OpenSpan, version: z.number().int() }),

@@ -32,7 +32,7 @@ export const Position = z.object({
 });
 export type Position = z.infer<typeof Position>;
 
-const Anchor = z.object({ number: WholeNumber, built: DateSpan, provenance: Provenance });
+const Anchor = z.object({ id: Id, number: WholeNumber, built: DateSpan, provenance: Provenance });
 
 export const ModelPage = ModelItem.extend({
   note: z.string().nullable(),

@@ -56,6 +56,7 @@ function presentFitment({ fitment, built }: PlacedFitment, records: FactRecords)
 
 function presentSuccession(supersession: Supersession, other: Casting, records: FactRecords): CastingPage['follows'][number] {
   return {
+    id: supersession.id,
     casting: presentCastingRef(other),
     interchange: supersession.interchange,
     note: supersession.note,

@@ -24,7 +24,7 @@ export function presentMaker(onRecord: MakerOnRecord): MakerPage {
     ...presentMakerItem(onRecord),
     foundryMark: maker.foundryMark,
     note: maker.note,
-    works: works.map(({ id, slug, name, place }) => ({ slug, name, place, provenance: presentProvenance(records.of(id)) })),
+    works: works.map(({ id, slug, name, place }) => ({ id, slug, name, place, provenance: presentProvenance(records.of(id)) })),
     modelList: models.map((model) => ({ ...presentNamed(model), kindOfMachine: model.machineKind, made: presentOpenSpan(model.made) })),
     cipherList: ciphers.map(presentCipherOfMaker),
     pouredFor: pouredFor.map(presentNamed),

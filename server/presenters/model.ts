@@ -33,6 +33,7 @@ export function presentModel({ model, positions, fitments, series, ranges, ancho
       anchors: anchors
         .filter(({ seriesId }) => seriesId === one.id)
         .map(({ id, number, built }) => ({
+          id,
           number,
           built: { from: built.from, to: built.to },
           provenance: presentProvenance(records.of(id)),

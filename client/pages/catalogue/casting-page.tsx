@@ -12,7 +12,7 @@ import { castingRule, ciphersInUse } from '../../features/castings/casting-rule.
 import { FitmentsTable } from '../../features/castings/fitments-table.tsx';
 import { sayCasting, sayInterchange } from '../../features/castings/say-casting.ts';
 import { cipherPage } from '../../features/ciphers/ciphers-queries.ts';
-import { FactActions } from '../../features/contributions/fact-actions.tsx';
+import { FactActions, RowActions } from '../../features/contributions/fact-actions.tsx';
 import { NOTHING_SAID, writeDecodeState } from '../../features/decode/decode-state.ts';
 import { paths } from '../../lib/paths.ts';
 import { sayOpenSpan, sayYears } from '../../lib/say-date.ts';
@@ -151,13 +151,14 @@ function whatItIs(casting: CastingPage, numbersOf: Numbers): Fact[] {
 
 function succession(
   name: string,
-  { casting, interchange, note }: CastingPage['follows'][number],
+  { id, casting, interchange, note }: CastingPage['follows'][number],
   named: 'older' | 'newer',
   notes: readonly number[],
 ): Fact {
   return {
     name,
     notes,
+    deeds: <RowActions factId={id} name={`${name} ${sayCasting(casting)}`} />,
     value: (
       <>
         <CastingLink casting={casting} />; {sayInterchange(interchange, named)}.{note !== null && ` ${sentence(note)}`}

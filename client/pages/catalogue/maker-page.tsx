@@ -3,7 +3,7 @@ import { useSuspenseQuery } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import type { LoaderFunction } from 'react-router-dom';
 import type { MakerPage } from '#contract/makers.ts';
-import { FactActions } from '../../features/contributions/fact-actions.tsx';
+import { FactActions, RowActions } from '../../features/contributions/fact-actions.tsx';
 import { makerPage } from '../../features/makers/makers-queries.ts';
 import { sayMachineKind } from '../../features/models/models-table.tsx';
 import { NOTHING_SAID, writeDecodeState } from '../../features/decode/decode-state.ts';
@@ -123,9 +123,10 @@ export function Component() {
             <Block heading="Works" margin={sourceMargin(notes.beside('works'))}>
               <FactList
                 names="cast"
-                facts={maker.works.map(({ slug, name, place }) => ({
+                facts={maker.works.map(({ id, slug, name, place }) => ({
                   name,
                   value: place ?? 'place not on record',
+                  deeds: <RowActions factId={id} name={name} />,
                   notes: notes.numbersOf(`works ${slug}`),
                 }))}
               />

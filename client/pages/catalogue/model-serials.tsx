@@ -1,6 +1,7 @@
 import { Link } from 'react-router-dom';
 import { accountsOf, saySeries, serialRows } from '../../features/models/serial-rows.ts';
 import type { Account, ModelRange, ModelSeries, SerialRow } from '../../features/models/serial-rows.ts';
+import { RowActions } from '../../features/contributions/fact-actions.tsx';
 import { RivalAccounts } from '../../features/moderation/rival-accounts.tsx';
 import { sayRangeDates, sayRangeStanding } from '../../features/serial-ranges/say-range.ts';
 import { paths } from '../../lib/paths.ts';
@@ -121,7 +122,12 @@ function DatedMachines({ series, numbersOf }: { readonly series: ModelSeries; re
             key: 'number',
             header: 'Serial',
             rowHeader: true,
-            cell: ({ number }) => <span className="font-mono text-[15px]">{saySerial(series.prefix, number)}</span>,
+            cell: ({ id, number }) => (
+              <>
+                <span className="font-mono text-[15px]">{saySerial(series.prefix, number)}</span>
+                <RowActions factId={id} name={saySerial(series.prefix, number)} />
+              </>
+            ),
           },
           {
             key: 'built',

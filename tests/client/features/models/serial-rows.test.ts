@@ -89,7 +89,7 @@ describe('saySeries', () => {
 
 describe('serialRule', () => {
   it('gives each account a lane and the dated machines one', () => {
-    const anchor = { number: '3', built: { from: '1939-02-10', to: '1939-02-10' }, provenance: PROVENANCE };
+    const anchor = { id: SERIES.id, number: '3', built: { from: '1939-02-10', to: '1939-02-10' }, provenance: PROVENANCE };
     const rule = serialRule([series([range('a', '1', '9', true), range('b', '4', '6')], [anchor])]);
     expect(rule?.lanes.map(({ name, kind }) => [name, kind])).toEqual([
       ['our reading', 'band'],
