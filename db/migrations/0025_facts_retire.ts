@@ -1,20 +1,5 @@
 import type { Knex } from 'knex';
 
-const KINDS_AND_TABLES = `
-  when 'maker' then 'makers'
-  when 'works' then 'works'
-  when 'model' then 'models'
-  when 'part-type' then 'part_types'
-  when 'position' then 'positions'
-  when 'casting' then 'castings'
-  when 'fitment' then 'fitments'
-  when 'supersession' then 'supersessions'
-  when 'series' then 'series'
-  when 'serial-range' then 'serial_ranges'
-  when 'anchor' then 'anchors'
-  when 'cipher' then 'ciphers'
-`;
-
 /**
  * A fact that was wrong leaves the catalogue and is not lost: its versions stay, none of them in force. So a fact is whole at commit in
  * one of two ways: it has its row, its latest version is in force and it stands on a source; or it has none of the three and a row here
@@ -57,7 +42,21 @@ export async function up(knex: Knex): Promise<void> {
         return null;
       end if;
 
-      fact_table := case fact_kind ${KINDS_AND_TABLES} when 'wear-limit' then 'wear_limits' end;
+      fact_table := case fact_kind
+        when 'maker' then 'makers'
+        when 'works' then 'works'
+        when 'model' then 'models'
+        when 'part-type' then 'part_types'
+        when 'position' then 'positions'
+        when 'casting' then 'castings'
+        when 'fitment' then 'fitments'
+        when 'supersession' then 'supersessions'
+        when 'series' then 'series'
+        when 'serial-range' then 'serial_ranges'
+        when 'anchor' then 'anchors'
+        when 'cipher' then 'ciphers'
+        when 'wear-limit' then 'wear_limits'
+      end;
       execute format('select exists (select from %I where id = $1)', fact_table) into has_row using fact;
 
       if fact_kind = 'cipher' then
@@ -135,7 +134,20 @@ export async function down(knex: Knex): Promise<void> {
         return null;
       end if;
 
-      fact_table := case fact_kind ${KINDS_AND_TABLES} end;
+      fact_table := case fact_kind
+        when 'maker' then 'makers'
+        when 'works' then 'works'
+        when 'model' then 'models'
+        when 'part-type' then 'part_types'
+        when 'position' then 'positions'
+        when 'casting' then 'castings'
+        when 'fitment' then 'fitments'
+        when 'supersession' then 'supersessions'
+        when 'series' then 'series'
+        when 'serial-range' then 'serial_ranges'
+        when 'anchor' then 'anchors'
+        when 'cipher' then 'ciphers'
+      end;
       execute format('select exists (select from %I where id = $1)', fact_table) into has_row using fact;
       if not has_row then
         raise exception 'fact % has no row in its table', fact

@@ -13,7 +13,7 @@ type Line = { readonly owner: string; readonly line: string };
 
 /**
  * The live schema in words, from PostgreSQL's own catalogue: value types, tables with their columns, constraints, indexes and
- * triggers, and functions. Names are in alphabetical order, columns in their own. Run with the address of a migrated database,
+ * triggers, views, and functions. Names are in alphabetical order, columns in their own. Run with the address of a migrated database,
  * this file writes the description it is compared with.
  */
 export async function describeSchema(knex: Knex): Promise<string> {
@@ -30,6 +30,7 @@ export async function describeSchema(knex: Knex): Promise<string> {
       ...subsection('indexes', ownedBy(indexes, table)),
       ...subsection('triggers', ownedBy(triggers, table)),
     ]),
+    ...(await linesOf(knex, VIEWS)).flatMap(({ owner, line }) => section(`view ${owner}`, line.trim().split('\n').map((one) => one.trim()))),
     ...section(
       'functions',
       (await linesOf(knex, FUNCTIONS)).flatMap(({ line }) => [...line.trim().split('\n'), '']),
@@ -105,6 +106,9 @@ const TRIGGERS = `
     join pg_namespace n on n.oid = c.relnamespace and n.nspname = 'public'
    where not t.tgisinternal
    order by c.relname, t.tgname`;
+
+const VIEWS = `
+  select viewname as owner, definition as line from pg_views where schemaname = 'public' order by viewname`;
 
 const VALUE_TYPES = `
   select '' as owner,

@@ -2,10 +2,9 @@ import { z } from 'zod';
 import { LooseCitation, LoosePayload } from '#contract/contributions.ts';
 import type { ContributionItem, ContributionPage, readContributor } from '#contract/contributions.ts';
 import type { AnswerOf } from '#contract/endpoint.ts';
-import { Findings } from '#contract/evidence.ts';
 import type { Evidence } from '#contract/evidence.ts';
-import type { ContributionEvidence } from '#db/models/contribution-evidence.ts';
 import type { ContributionPageOnRecord } from '#server/services/contributions/contribution-page.ts';
+import type { KeptEvidence } from '#server/services/contributions/kept-evidence.ts';
 import type { ContributionOnRecord } from '#server/services/contributions/load-contributions.ts';
 import type { ContributorOnRecord, GivenVersion } from '#server/services/contributions/read-contributor.ts';
 import type { VersionOnRecord } from '#server/services/facts/fact-versions.ts';
@@ -57,8 +56,8 @@ function presentVersion({ number, payload, citations }: VersionOnRecord): NonNul
   return { version: number, payload: LoosePayload.parse(payload), citations: citations.map(presentCitation) };
 }
 
-export function presentEvidence({ id, gatheredAt, occasion, revision, findings }: ContributionEvidence): Evidence {
-  return { ...Findings.parse(findings), id, gatheredAt, occasion, revision };
+export function presentEvidence({ evidence: { id, gatheredAt, occasion, revision }, findings }: KeptEvidence): Evidence {
+  return { ...findings, id, gatheredAt, occasion, revision };
 }
 
 export function presentContributor({ member, given, kinds }: ContributorOnRecord): ContributorPage {

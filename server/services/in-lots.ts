@@ -12,8 +12,8 @@ const names = snakeCaseMappers();
 const ROWS_IN_A_LOT = 5_000;
 const FETCH_A_LOT = 'fetch forward 5000 from ??';
 
-/** The first lot of a long query may take as long as all of it. */
-const PATIENCE = '30s';
+/** The first lot of a long query may take as long as all of it, and whoever asks may be long about each. */
+const PATIENCE = '60s';
 
 /**
  * The rows of a long query, some thousands at a time, by a cursor: worked out once, of one moment, and never all in memory. Inside a transaction
@@ -24,7 +24,7 @@ export async function* inLots(query: Knex.QueryBuilder, knex: Knex): AsyncGenera
   const trx = own ?? knex;
   const cursor = `lots_${randomBytes(6).toString('hex')}`;
   try {
-    if (own !== null) await own.raw(`select set_config('statement_timeout', ?, true), set_config('cursor_tuple_fraction', '1', true)`, [PATIENCE]);
+    if (own !== null) await prepare(own);
     await trx.raw(`declare ?? no scroll cursor for ?`, [cursor, query]);
     for (;;) {
       const { rows } = Answer.parse(await trx.raw(FETCH_A_LOT, [cursor]));
@@ -35,4 +35,10 @@ export async function* inLots(query: Knex.QueryBuilder, knex: Knex): AsyncGenera
   } finally {
     await own?.rollback();
   }
+}
+
+async function prepare(trx: Knex.Transaction): Promise<void> {
+  for (const limit of ['statement_timeout', 'idle_in_transaction_session_timeout']) await trx.raw('select set_config(?, ?, true)', [limit, PATIENCE]);
+  // All rows are wanted: the plan that has the first ones soonest is not the best.
+  await trx.raw(`select set_config('cursor_tuple_fraction', '1', true)`);
 }

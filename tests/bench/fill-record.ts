@@ -6,7 +6,7 @@ import { write } from '#domain/ciphers/write.ts';
 import { parseDay } from '#domain/dates/day.ts';
 import { lookAlikesOf } from '#domain/marks/look-alikes.ts';
 import { parseReading, writeReading } from '#domain/marks/reading.ts';
-import { Casting } from '#db/models/casting.ts';
+import type { Casting } from '#db/models/casting.ts';
 import { CipherVersion } from '#db/models/cipher-version.ts';
 import { Fitment } from '#db/models/fitment.ts';
 import { Machine } from '#db/models/machine.ts';

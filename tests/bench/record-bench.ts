@@ -1,5 +1,6 @@
 import type { Knex } from 'knex';
 import { v7 as uuidV7 } from 'uuid';
+import { z } from 'zod';
 import { connect } from '#db/connection.ts';
 import { CipherVersion } from '#db/models/cipher-version.ts';
 import { Cipher } from '#db/models/cipher.ts';
@@ -14,6 +15,8 @@ import { fillRecord } from './fill-record.ts';
 import { printTable } from './print-table.ts';
 
 const SIZES = [10_000, 30_000, 100_000];
+
+const Texts = z.tuple([z.object({ count: z.string() })]);
 
 type Measured = { readonly marks: number; readonly texts: number; readonly evidence: number; readonly first: number; readonly again: number; readonly changed: number };
 
@@ -49,7 +52,7 @@ async function measure(size: number, run: TestRun, template: string): Promise<Me
     await knex('reworks').delete();
     await knex('parts').delete();
     await fillRecord(size, { cipherId: cipher.id, modelId: model.id }, knex);
-    const texts = await knex('marks').where({ kind: 'date-code' }).countDistinct({ count: 'reading' }).first<{ count: string }>();
+    const texts = Texts.parse(await knex('marks').where({ kind: 'date-code' }).countDistinct({ count: 'reading' }))[0].count;
 
     const version = await CipherVersion.query(knex).modify('inForce').findOne({ cipherId: cipher.id }).throwIfNotFound();
     const definition = { ...version.definition, usedTo: '1941-06-30' };
@@ -63,7 +66,7 @@ async function measure(size: number, run: TestRun, template: string): Promise<Me
     });
     const again = await seconds(() => rework(cipher, version.number + 1, knex));
     const last = await Rework.query(knex).orderBy('id', 'desc').first().throwIfNotFound();
-    return { marks: size, texts: Number(texts?.count ?? 0), evidence, first, again, changed: last.changed };
+    return { marks: size, texts: Number(texts), evidence, first, again, changed: last.changed };
   } finally {
     await knex.destroy();
     await dropDatabases(run.adminUrl, [database]);

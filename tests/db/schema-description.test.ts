@@ -17,6 +17,7 @@ test.each<[string, string, string]>([
     'works_place_check: CHECK (place IS NOT NULL)',
   ],
   ['an index', 'create index works_place on works (place)', 'INDEX works_place ON public.works USING btree (place)'],
+  ['a view', 'create view lone_works as select id from works', 'view lone_works'],
   ['a value type', 'create domain colour as text', 'colour: text'],
   ['a function', 'create function one() returns int language sql return 1', ' FUNCTION public.one()'],
   [

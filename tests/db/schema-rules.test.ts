@@ -1,5 +1,4 @@
 import { describe, expect, test } from 'vitest';
-import { MACHINE_KINDS } from '#domain/vocabulary.ts';
 import {
   CONTRIBUTION_STATES,
   DATE_MEANINGS,
@@ -8,6 +7,7 @@ import {
   FACT_KINDS,
   FITMENT_VERDICTS,
   INTERCHANGES,
+  MACHINE_KINDS,
   MEASURE_UNITS,
   SOURCE_KINDS,
   WEAR_DIRECTIONS,

@@ -75,7 +75,7 @@ export function DraftForm({ contribution, draft, store, faults, tries }: FormPro
             id={controlId(['note'])}
             className="max-w-[680px]"
             label="To the moderators (optional)"
-            hint="Becomes the reason that stands with the version."
+            hint="Whoever decides reads it first."
             error={faults.find(({ path }) => path[0] === 'note')?.message}
           >
             {(control) => (

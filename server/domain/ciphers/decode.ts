@@ -22,6 +22,8 @@ export type DecodeOptions = {
   readonly limits?: DayLimits | undefined;
   /** Whether a glyph seen for certain may be one it is taken for. */
   readonly lookAlikes?: boolean | undefined;
+  /** Whether only the dates are wanted: `settle` and `splits` are left empty, and `reasons` where there is a date. Several times as quick. */
+  readonly datesOnly?: boolean | undefined;
 };
 
 /** At most so many candidates are listed; `Decoding.total` counts them all. */
@@ -31,6 +33,8 @@ const CANDIDATES_LISTED = 200;
 const STEPS_TO_SETTLE = 300_000;
 /** What working a reading out costs at the least. */
 const STEPS_A_LOOK = 300;
+
+const NOTHING_LEFT = { settle: [], splits: [], steps: 0 } as const;
 
 const NOTHING_FOUND = { status: 'none', total: 0, candidates: [], settle: [], splits: [], likelihood: 0 } as const;
 
@@ -70,12 +74,13 @@ export function decode(reading: Reading, cipher: CompiledCipher, options: Decode
   const total = spans?.size ?? 0;
   const weight = working.found?.weight ?? 0;
   const candidates = spans === null ? [] : candidatesOf(working, spans, weight, cipher);
-  const left = whatIsLeft({ rows, breaks: reading.breaks, cipher, days }, working, spans);
+  const datesOnly = options.datesOnly ?? false;
+  const left = datesOnly ? NOTHING_LEFT : whatIsLeft({ rows, breaks: reading.breaks, cipher, days }, working, spans);
   return {
     status: total === 0 ? 'none' : total === 1 ? 'dated' : 'several',
     total,
     candidates,
-    reasons: reasonsFor({ reading, rows, cipher, use, days }, candidates),
+    reasons: datesOnly && total > 0 ? [] : reasonsFor({ reading, rows, cipher, use, days }, candidates),
     settle: left.settle,
     splits: left.splits,
     likelihood: weight / daysIn(days),
@@ -125,12 +130,12 @@ function whatIsLeft(
   working: Working,
   spans: SpanTable | null,
 ): Pick<Decoding, 'settle' | 'splits'> & { readonly steps: number } {
-  if (spans === null || spans.size <= 1) return { settle: [], splits: [], steps: 0 };
+  if (spans === null || spans.size <= 1) return NOTHING_LEFT;
   const uncertain = uncertainPositions(question.rows);
   const isGlyph = uncertain.length > 0;
   const places = isGlyph ? uncertain.length : question.rows.length - 1;
   const looks = isGlyph ? uncertain.reduce((sum, position) => sum + (question.rows[position]?.glyphs.length ?? 0), 0) : places;
-  if (working.steps * places + STEPS_A_LOOK * looks > STEPS_TO_SETTLE) return { settle: [], splits: [], steps: 0 };
+  if (working.steps * places + STEPS_A_LOOK * looks > STEPS_TO_SETTLE) return NOTHING_LEFT;
   return isGlyph ? { ...whatSettles(question), splits: [] } : { ...whichGapsSettle(question, spans), settle: [] };
 }
 

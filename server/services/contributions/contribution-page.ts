@@ -4,6 +4,7 @@ import { formOf } from '#contract/kinds.ts';
 import type { FieldFault } from '#contract/problem.ts';
 import { ContributionComment } from '#db/models/contribution-comment.ts';
 import { ContributionDecision } from '#db/models/contribution-decision.ts';
+import type { Contribution } from '#db/models/contribution.ts';
 import type { Member } from '#db/models/member.ts';
 import { contributionRights, mayReadComments, moderatesMaker, requireMayReadContribution } from '#server/policies/contributions.ts';
 import type { ContributionRights } from '#server/policies/contributions.ts';
@@ -32,16 +33,22 @@ export type ContributionPageOnRecord = ContributionOnRecord & {
 };
 
 /**
- * A contribution with everything its author, a moderator or anybody else may see of it.
+ * A contribution with everything its author, a moderator or anybody else may see of it. `knownFaults` are its faults where they were told
+ * just now, so that they are not looked for again.
  *
  * @throws ProblemError `not-found`, `second-factor-owed`.
  */
-export async function contributionPage(viewer: Viewer, id: string, knex: Knex): Promise<ContributionPageOnRecord> {
+export async function contributionPage(
+  viewer: Viewer,
+  id: string,
+  knex: Knex,
+  knownFaults?: readonly FieldFault[],
+): Promise<ContributionPageOnRecord> {
   const [onRecord] = await loadContributions([id], knex);
   if (!onRecord) throw new ProblemError('not-found', 'No contribution of this id is for you to see.');
   const { contribution } = onRecord;
   requireMayReadContribution(viewer, contribution);
-  const { kind, subjectId, baseVersion, payload, citations, state } = contribution;
+  const { kind, subjectId, baseVersion, payload, state } = contribution;
 
   const versions = subjectId === null ? [] : await versionsOf({ id: subjectId, kind }, knex);
   const base = versions.find(({ number }) => number === baseVersion) ?? null;
@@ -49,20 +56,25 @@ export async function contributionPage(viewer: Viewer, id: string, knex: Knex): 
   const names = await namesWithin(kind, [contribution, base, inForce].flatMap((said) => said ?? []), knex);
   // What was entered is told against what it changed, not against what it became.
   const before = state === 'entered' ? base : inForce;
-  const isOpen = state === 'drafted' || state === 'sent-back' || state === 'put-forward';
-  const checked = isOpen ? await checkProposal({ kind, subjectId, authorId: contribution.authorId, payload, citations }, knex) : undefined;
   return {
     ...onRecord,
     base,
     inForce,
     differences: differencesOf(formOf(kind), before?.payload ?? null, payload, names.nameOf),
-    faults: checked?.ok === false ? checked.fault : [],
+    faults: knownFaults ?? (await faultsOf(contribution, knex)),
     names,
     comments: mayReadComments(viewer, contribution) ? await commentsOn(id, knex) : [],
     decisions: await ContributionDecision.query(knex).where({ contributionId: id }).orderBy(['at', 'id']).withGraphFetched('by'),
     openWith: await openWith(viewer, onRecord, knex),
     can: contributionRights(viewer, contribution),
   };
+}
+
+/** What stands in the way of what is still to be entered. */
+async function faultsOf({ kind, subjectId, authorId, payload, citations, state }: Contribution, knex: Knex): Promise<readonly FieldFault[]> {
+  if (state === 'entered' || state === 'turned-down' || state === 'withdrawn') return [];
+  const checked = await checkProposal({ kind, subjectId, authorId, payload, citations }, knex);
+  return checked.ok ? [] : checked.fault;
 }
 
 function commentsOn(contributionId: string, knex: Knex): Promise<ContributionComment[]> {

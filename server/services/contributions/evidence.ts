@@ -9,13 +9,15 @@ import { kindModule } from '#server/services/kinds/all-kinds.ts';
 import { parsePayload } from '#server/services/kinds/parse-payload.ts';
 import type { RequestContext } from '#server/services/people/request-context.ts';
 import { ProblemError } from '#server/services/problem-error.ts';
+import { keptEvidence } from './kept-evidence.ts';
+import type { KeptEvidence } from './kept-evidence.ts';
 
 /**
  * The evidence kept with a contribution, the newest first.
  *
  * @throws ProblemError `not-found`, `second-factor-owed`; `not-allowed` for a draft.
  */
-export async function readEvidence(viewer: Viewer, id: string, knex: Knex): Promise<readonly ContributionEvidence[]> {
+export async function readEvidence(viewer: Viewer, id: string, knex: Knex): Promise<readonly KeptEvidence[]> {
   const contribution = await readable(viewer, id, knex);
   if (!contributionRights(viewer, contribution).seeEvidence) throw new ProblemError('not-allowed', 'There is no evidence before it is put forward.');
   return keptEvidence(id, knex);
@@ -26,7 +28,7 @@ export async function readEvidence(viewer: Viewer, id: string, knex: Knex): Prom
  *
  * @throws ProblemError `not-signed-in`, `not-found`, `not-allowed`, `second-factor-owed`; `conflict` once it is decided.
  */
-export async function gatherEvidence(id: string, { viewer }: RequestContext, knex: Knex): Promise<readonly ContributionEvidence[]> {
+export async function gatherEvidence(id: string, { viewer }: RequestContext, knex: Knex): Promise<readonly KeptEvidence[]> {
   signedIn(viewer);
   const contribution = await readable(viewer, id, knex);
   requireModerator(viewer, contribution.makerId);
@@ -44,8 +46,4 @@ async function readable(viewer: Viewer, id: string, knex: Knex): Promise<Contrib
   if (!contribution) throw new ProblemError('not-found', 'No contribution of this id is for you to see.');
   requireMayReadContribution(viewer, contribution);
   return contribution;
-}
-
-async function keptEvidence(contributionId: string, knex: Knex): Promise<readonly ContributionEvidence[]> {
-  return ContributionEvidence.query(knex).where({ contributionId }).orderBy([{ column: 'gatheredAt', order: 'desc' }, { column: 'id', order: 'desc' }]);
 }

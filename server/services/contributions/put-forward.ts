@@ -63,7 +63,7 @@ export async function putForward(id: string, revision: number, { viewer, request
         findings,
       });
       await writeContributionAudit('contribution.put-forward', put, { actorId: member.id, requestId }, trx);
-      return contributionPage(viewer, id, trx);
+      return contributionPage(viewer, id, trx, []);
     },
     { actorId: member.id },
   );

@@ -16,18 +16,24 @@ import type { ContributionPageOnRecord } from './contribution-page.ts';
 import { contributionTitle } from './contribution-title.ts';
 import { writeContributionAudit } from './write-contribution-audit.ts';
 
+/** More than anybody works on at once. */
+const MOST_DRAFTS = 100;
+
 type Start = HandlerInput<typeof startEndpoint>['body'];
 
 /**
  * Begins a contribution: of a new fact, or on the version of a fact that its author looks at.
  *
- * @throws ProblemError `not-signed-in`; `invalid` at `subjectId` or `baseVersion`; `conflict` where that version is no longer in force.
+ * @throws ProblemError `not-signed-in`; `invalid` at `subjectId` or `baseVersion`; `conflict` where that version is no longer in force,
+ *   and for whoever has a hundred drafts.
  */
 export async function startContribution(start: Start, { viewer, requestId }: RequestContext, knex: Knex): Promise<ContributionPageOnRecord> {
   const member = signedIn(viewer);
   return withTransaction(
     knex,
     async (trx) => {
+      const drafts = await Contribution.query(trx).where({ authorId: member.id, state: 'drafted' }).resultSize();
+      if (drafts >= MOST_DRAFTS) throw new ProblemError('conflict', `You have ${MOST_DRAFTS} drafts. Put some forward, or throw some away, first.`);
       const base = await baseOf(start, trx);
       const payload = start.payload ?? base?.payload ?? {};
       const subjectId = start.subjectId ?? null;

@@ -9,7 +9,7 @@ import { inTurns } from '#server/services/in-turns.ts';
 import { readingOnRecord } from '#server/services/marks/mark-dating.ts';
 
 /** Random keys tried. */
-export const KEYS_TRIED = 199;
+const KEYS_TRIED = 199;
 
 /** A reading and its casting’s years. */
 export type DatedCasting = { readonly reading: string; readonly made: DayLimits };

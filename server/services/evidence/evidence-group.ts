@@ -1,7 +1,7 @@
 import type { EvidenceGroup, EvidenceItem } from '#contract/evidence.ts';
 
 /** Lines listed in a group; the count tells them all. */
-export const MOST_LISTED = 25;
+const MOST_LISTED = 25;
 
 /** A group of evidence while it is gathered. */
 export type Gathering = {

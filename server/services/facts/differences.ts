@@ -125,7 +125,9 @@ function sayDay(iso: Json): string {
 /** A cipher's definition: the layout, each set of symbols, the days in use and each exception. */
 function cipherLines(path: Path, definition: Payload): Line[] {
   const lines: Line[] = [];
-  const add = (more: Path, label: string, text: string): void => void (text !== '' && lines.push({ path: [...path, ...more], label, text }));
+  const add = (more: Path, label: string, text: string): void => {
+    if (text !== '') lines.push({ path: [...path, ...more], label, text });
+  };
   const { fields, symbolSets, yearStart, usedFrom, usedTo, exceptions } = definition;
   add(['fields'], 'Layout', Array.isArray(fields) ? fields.map(sayCipherField).join(', ') : asSent(fields));
   if (isRecord(symbolSets)) {

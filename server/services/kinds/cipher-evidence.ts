@@ -59,8 +59,9 @@ export async function cipherEvidence({ factId, payload }: Proposal<'cipher'>, kn
       if (now.status === 'none') return;
       const { made } = mark;
       if (made !== null) {
+        const years = daysMade(made);
         onDatedCastings += 1;
-        if (everyDate(now, (candidate) => overlap(candidate, daysMade(made)) === null)) {
+        if (everyDate(now, (candidate) => overlap(candidate, years) === null)) {
           outside.add(mark.isPublic, () => line(`${sayDating(now)}; poured ${sayOpenDays(made)}`));
         }
       }

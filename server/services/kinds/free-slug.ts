@@ -7,7 +7,7 @@ const LONGEST = 96;
 const MARKS = /\p{M}+/gu;
 
 /** A text as an address may have it: small letters, digits and single hyphens. */
-export function slugFrom(text: string): string {
+function slugFrom(text: string): string {
   const plain = text.normalize('NFKD').replaceAll(MARKS, '').toLowerCase();
   const slug = plain.replaceAll(/[^a-z0-9]+/g, '-').slice(0, LONGEST).replaceAll(/^-+|-+$/g, '');
   return slug === '' ? 'entry' : slug;

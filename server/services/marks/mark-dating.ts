@@ -22,7 +22,7 @@ const MOST_KEPT = 50_000;
 /** Dates marks under one cipher, each text once. Breaks, look-alikes and limits are as everywhere on the record: no limits, no look-alikes. */
 export function markDating(cipher: CompiledCipher, asOf: Day): (text: string) => MarkDating {
   return remembering((text) => {
-    const { status, total, candidates, reasons, likelihood } = decode(readingOnRecord(text), cipher, { asOf });
+    const { status, total, candidates, reasons, likelihood } = decode(readingOnRecord(text), cipher, { asOf, datesOnly: true });
     return {
       status,
       total,

@@ -1,11 +1,11 @@
 import type { Knex } from 'knex';
 import { writeSerial } from '#domain/serials/serial.ts';
 import { CipherVersion } from '#db/models/cipher-version.ts';
-import { FactName } from '#db/models/fact-name.ts';
 import { FactVersion } from '#db/models/fact-version.ts';
 import type { Machine } from '#db/models/machine.ts';
 import { ReworkMachine } from '#db/models/rework-machine.ts';
 import type { Rework } from '#db/models/rework.ts';
+import { nameFact } from '#server/services/facts/name-facts.ts';
 import { groupedBy } from '#server/services/grouped-by.ts';
 import { notify } from '#server/services/notices/notify.ts';
 
@@ -28,11 +28,11 @@ export async function finishRework(rework: Rework, trx: Knex.Transaction): Promi
 }
 
 async function whyOf({ factId, kind, version }: Rework, trx: Knex.Transaction): Promise<string> {
-  const name = await FactName.query(trx).findOne({ id: factId });
-  const title = name?.title ?? 'An entry of the catalogue';
+  const title = (await nameFact(factId, trx))?.title ?? 'An entry of the catalogue';
   if (version === null) return `${title} was taken out of the catalogue.`;
   const entered = kind === 'cipher' ? await CipherVersion.query(trx).findById([factId, version]) : await FactVersion.query(trx).findById([factId, version]);
-  return `Version ${version} of ${title} came into force. Reason: ${shortened(entered?.reason ?? 'not given')}`;
+  const reason = entered === undefined ? '' : `: ${shortened(entered.reason)}`;
+  return `${title} changed and is at version ${version}${reason}`;
 }
 
 function titleOf(machines: readonly ReworkMachine[]): string {

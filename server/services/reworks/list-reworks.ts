@@ -1,9 +1,10 @@
 import type { Knex } from 'knex';
-import { FactName } from '#db/models/fact-name.ts';
 import { Rework } from '#db/models/rework.ts';
 import { requireMaySeeReworks } from '#server/policies/reworks.ts';
 import type { Viewer } from '#server/policies/viewer.ts';
 import { countsBy } from '#server/services/counts-by.ts';
+import { nameFacts } from '#server/services/facts/name-facts.ts';
+import type { NamedFact } from '#server/services/facts/name-facts.ts';
 import { listPage } from '#server/services/list-page.ts';
 import type { ListRequest, Order, Page } from '#server/services/list-page.ts';
 import { matchText } from '#server/services/search.ts';
@@ -19,8 +20,7 @@ export type ReworkListing = ListRequest<keyof typeof ORDERS> & {
 
 export type ReworkOnRecord = {
   readonly rework: Rework;
-  /** `null`: the fact has left the catalogue. */
-  readonly name: FactName | null;
+  readonly fact: NamedFact;
   readonly machinesChanged: number;
 };
 
@@ -44,14 +44,16 @@ export async function listReworks(viewer: Viewer, request: ReworkListing, knex: 
     },
     knex,
   );
-  const names = await FactName.query(knex).whereIn('id', page.items.map(({ factId }) => factId));
+  const names = await nameFacts(page.items.map(({ factId }) => factId), knex);
   const machines = await countsBy({ table: 'rework_machines', owner: 'reworkId' }, page.items.map(({ id }) => id), knex);
   return {
     ...page,
-    items: page.items.map((rework) => ({
-      rework,
-      name: names.find(({ id }) => id === rework.factId) ?? null,
-      machinesChanged: machines.get(rework.id) ?? 0,
-    })),
+    items: page.items.map((rework) => ({ rework, fact: factOf(rework, names), machinesChanged: machines.get(rework.id) ?? 0 })),
   };
+}
+
+function factOf({ factId }: Rework, names: ReadonlyMap<string, NamedFact>): NamedFact {
+  const fact = names.get(factId);
+  if (fact === undefined) throw new RangeError('A rework is of a fact');
+  return fact;
 }

@@ -1,7 +1,9 @@
+import { v7 as uuidV7 } from 'uuid';
 import { beforeEach, describe, expect, test } from 'vitest';
-import { ContributionPage } from '#contract/contributions.ts';
+import { ContributionPage, readEvidence } from '#contract/contributions.ts';
 import { ContributionEvidence } from '#db/models/contribution-evidence.ts';
 import { ContributionOpening } from '#db/models/contribution-opening.ts';
+import { Mark } from '#db/models/mark.ts';
 import { FactName } from '#db/models/fact-name.ts';
 import { Notice } from '#db/models/notice.ts';
 import { decide, enter, entered, factCalled, historyOf, OWN_KNOWLEDGE, putForward, someone, start } from '#tests/support/contributing.ts';
@@ -198,6 +200,17 @@ describe('what is said and found out about it', () => {
     await decide(moderator, put, 'turn-down').expect(200);
     await problemOf(gather(moderator), 409);
     expect(await ContributionEvidence.query(people.knex).where({ contributionId: put.id })).toHaveLength(2);
+  });
+
+  test('evidence lists no mark that was taken from sight since, and still counts it', async () => {
+    const put = await putForwardWorks();
+    const [seen, hidden] = await Mark.query(people.knex).joinRelated('part').where('part.visibility', 'public').orderBy('marks.id').limit(2);
+    const items = [seen, hidden].map((mark) => ({ subject: { kind: 'mark', id: mark?.id, title: 'A mark' }, mark: 'K12', text: 'Seen' }));
+    const findings = { groups: [{ code: 'dates', title: 'Dates', count: 2, of: 2, items: [...items, { subject: null, mark: null, text: 'And more' }], unlisted: 0 }], figures: [] };
+    await ContributionEvidence.query(people.knex).insert({ id: uuidV7(), contributionId: put.id, revision: put.revision, occasion: 'opened', findings });
+    await people.knex('parts').where({ id: hidden?.partId ?? '' }).update({ visibility: 'private' });
+    const { groups } = readEvidence.answer.parse((await author.browser.get(`/api/contributions/${put.id}/evidence`).expect(200)).body).items[0] ?? { groups: [] };
+    expect(groups).toEqual([{ ...findings.groups[0], items: [items[0], { subject: null, mark: null, text: 'And more' }], unlisted: 1 }]);
   });
 
   test('whoever has it open is told to other moderators for a minute', async () => {

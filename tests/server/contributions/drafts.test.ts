@@ -1,8 +1,12 @@
+import { v7 as uuidV7 } from 'uuid';
 import { describe, expect, test } from 'vitest';
+import { listAudit } from '#contract/admin.ts';
 import { ContributionPage } from '#contract/contributions.ts';
+import { Account } from '#db/models/account.ts';
 import { AuditRow } from '#db/models/audit-row.ts';
 import { Contribution } from '#db/models/contribution.ts';
 import { FactName } from '#db/models/fact-name.ts';
+import { Source } from '#db/models/source.ts';
 import { CIPHER_LIMITS } from '#domain/ciphers/definition.ts';
 import { decide, factCalled, OWN_KNOWLEDGE, putForward, someone, start } from '#tests/support/contributing.ts';
 import type { SomeoneSignedIn } from '#tests/support/contributing.ts';
@@ -68,6 +72,15 @@ describe('a draft', () => {
     await problemOf(save(author, put), 409);
   });
 
+  test('is one of a hundred at most', async () => {
+    const author = await someone(people);
+    const rows = Array.from({ length: 100 }, () => ({ id: uuidV7(), authorId: author.id, kind: 'casting', title: 'B1', state: 'drafted', payload: {}, citations: [] }) as const);
+    await Contribution.query(people.knex).insert(rows);
+    await problemOf(author.browser.post('/api/contributions').send({ kind: 'casting' }), 409);
+    await author.browser.delete(`/api/contributions/${rows[0]?.id}`).expect(200);
+    await start(author, { kind: 'casting', payload: {} });
+  });
+
   test('is its author’s alone', async () => {
     const author = await someone(people);
     const draft = await start(author, { kind: 'part-type', payload: PART_TYPE });
@@ -109,6 +122,18 @@ describe('a draft', () => {
     await problemOf(browser.get(`/api/contributions/${NOBODY}`), 404);
   });
 
+  test('is named in the trail once it was put forward, and not before', async () => {
+    const [author, registrar] = [await someone(people), await someone(people, { role: 'registrar' })];
+    const draft = await start(author, { kind: 'part-type', payload: { ...PART_TYPE, name: 'Trail peg' } });
+    const nameInTrail = async (): Promise<readonly (string | undefined)[]> => {
+      const answer = await registrar.browser.get(`/api/admin/audit?subject=${draft.id}`).expect(200);
+      return listAudit.answer.parse(answer.body).items.map(({ subject }) => subject?.name);
+    };
+    expect(await nameInTrail()).toEqual([draft.id]);
+    await putForward(author, draft);
+    expect(await nameInTrail()).toEqual(['Trail peg', 'Trail peg']);
+  });
+
   test('of a member who closes the account goes with it; what was put forward stays', async () => {
     const author = await someone(people);
     const draft = await start(author, { kind: 'part-type', payload: PART_TYPE });
@@ -138,7 +163,7 @@ describe('putting forward', () => {
   test('takes no book without a page, no source twice, and at least one', async () => {
     const author = await someone(people);
     const book = { ...OWN_KNOWLEDGE, newSource: { kind: 'book', title: 'A book', author: null, publisher: null, year: null, note: null } };
-    const { id: sourceId } = await people.knex('sources').first('id');
+    const { id: sourceId } = await Source.query(people.knex).first().throwIfNotFound();
     const cited = { ...OWN_KNOWLEDGE, sourceId, newSource: null };
     for (const [sources, path] of [
       [[], 'citations'],
@@ -163,7 +188,7 @@ describe('putting forward', () => {
     const lead = { modelId: crawler, partTypeId, name: 'Under the seat', ordinal: 77, weight: 1, lead: { from: 0, to: 9 }, note: null };
     const range = { accountId: null, built: { from: '1950-01-01', to: '1950-12-31' }, precision: 'year', meaning: 'built', standing: 'solid', inOrder: true, note: null };
     const seriesId = await factCalled(people, 'series', '30 Crawler 3C');
-    const [book] = await people.knex('accounts').where({ slug: 'brackwater-parts-book-14' });
+    const book = await Account.query(people.knex).findOne({ slug: 'brackwater-parts-book-14' }).throwIfNotFound();
     for (const [kind, payload, path] of [
       ['works', { makerId: modelId, name: 'Yard', place: null, note: null }, 'payload.makerId'],
       ['works', { makerId: NOBODY, name: 'Yard', place: null, note: null }, 'payload.makerId'],

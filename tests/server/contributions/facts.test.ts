@@ -1,5 +1,6 @@
 import { beforeEach, describe, expect, test } from 'vitest';
 import { FactHistory } from '#contract/facts.ts';
+import { Anchor } from '#db/models/anchor.ts';
 import { AuditRow } from '#db/models/audit-row.ts';
 import { FactName } from '#db/models/fact-name.ts';
 import { Flag } from '#db/models/flag.ts';
@@ -121,11 +122,11 @@ describe('retiring a fact', () => {
   });
 
   test('has what rested on it worked out again', async () => {
-    const before = await people.knex('anchors').first('id').orderBy('id');
-    const { inForce } = await historyOf(moderator, before.id as string);
-    await retire(moderator, before.id as string, inForce ?? 0).expect(200);
-    expect(await Rework.query(people.knex).where({ factId: before.id as string })).toMatchObject([{ version: null, state: 'waiting' }]);
-    expect(await historyOf(author, before.id as string)).toMatchObject({ workingOut: true });
+    const { id } = await Anchor.query(people.knex).orderBy('id').first().throwIfNotFound();
+    const { inForce } = await historyOf(moderator, id);
+    await retire(moderator, id, inForce ?? 0).expect(200);
+    expect(await Rework.query(people.knex).where({ factId: id })).toMatchObject([{ version: null, state: 'waiting' }]);
+    expect(await historyOf(author, id)).toMatchObject({ workingOut: true });
   });
 
   test('is for moderators of its maker', async () => {

@@ -1,5 +1,6 @@
 import { beforeAll, describe, expect, test } from 'vitest';
-import { ContributionItem } from '#contract/contributions.ts';
+import { z } from 'zod';
+import { gatherEvidence, listMyContributions, readContributor } from '#contract/contributions.ts';
 import { QueueItem } from '#contract/moderation.ts';
 import { Contribution } from '#db/models/contribution.ts';
 import { Member } from '#db/models/member.ts';
@@ -14,15 +15,14 @@ import { pathsOf, problemOf } from '#tests/support/problem.ts';
 
 const people = usePeople();
 
-type Page = { readonly items: QueueItem[]; readonly next: string | null; readonly total?: number };
+const Queue = z.object({ items: z.array(QueueItem), next: z.string().nullable(), total: z.number().optional() });
+type Page = z.infer<typeof Queue>;
 
 async function queue({ browser }: Pick<SomeoneSignedIn, 'browser'>, query = ''): Promise<Page> {
-  const { body } = await browser.get(`/api/moderation/queue?limit=100&${query}`).expect(200);
-  const { items, next } = body as { items: unknown; next: string | null };
-  return { items: QueueItem.array().parse(items), next };
+  return Queue.parse((await browser.get(`/api/moderation/queue?limit=100&${query}`).expect(200)).body);
 }
 
-function titles({ items }: Page): readonly string[] {
+function titles({ items }: Pick<Page, 'items'>): readonly string[] {
   return items.map((item) => (item.type === 'flag' ? item.flag.fact.title : item.contribution.title));
 }
 
@@ -45,11 +45,31 @@ describe('the queue', () => {
   });
 
   test('pages without repeating', async () => {
-    const { body } = await moderator.browser.get('/api/moderation/queue?limit=2').expect(200);
-    const { items, next, total } = body as Page;
+    const { items, next, total } = Queue.parse((await moderator.browser.get('/api/moderation/queue?limit=2').expect(200)).body);
     const rest = await queue(moderator, `after=${next ?? ''}`);
-    expect(titles({ items: [...items, ...rest.items], next: null })).toEqual(titles(await queue(moderator)));
+    expect(titles({ items: [...items, ...rest.items] })).toEqual(titles(await queue(moderator)));
     expect(total).toBe(items.length + rest.items.length);
+  });
+
+  test('takes no more statements for many than for a few', async () => {
+    let statements = 0;
+    const count = (): void => {
+      statements += 1;
+    };
+    people.knex.on('query', count);
+    const taken = async (path: string): Promise<number> => {
+      statements = 0;
+      await moderator.browser.get(path).expect(200);
+      return statements;
+    };
+    try {
+      expect(await taken('/api/moderation/queue?limit=9')).toBe(await taken('/api/moderation/queue?limit=100'));
+      expect(await taken('/api/facts?kind=fitment&limit=5')).toBe(await taken('/api/facts?kind=fitment&limit=100'));
+      const harrow = await Member.query(people.knex).findOne({ displayName: 'Harrow Lane' }).throwIfNotFound();
+      expect(await taken(`/api/contributors/${harrow.id}?limit=5`)).toBe(await taken(`/api/contributors/${harrow.id}?limit=100`));
+    } finally {
+      people.knex.removeListener('query', count);
+    }
   });
 
   test('shows a moderator the makers in scope, a registrar everything, and nobody else anything', async () => {
@@ -83,8 +103,8 @@ describe('one’s own contributions', () => {
     const second = await start(author, { kind: 'maker', payload: { name: 'Peg & Sons' } });
     await putForward(author, first);
     const list = async (query = ''): Promise<readonly string[]> => {
-      const { body } = await author.browser.get(`/api/me/contributions?${query}`).expect(200);
-      return ContributionItem.array().parse((body as { items: unknown }).items).map(({ id }) => id);
+      const answer = await author.browser.get(`/api/me/contributions?${query}`).expect(200);
+      return listMyContributions.answer.parse(answer.body).items.map(({ id }) => id);
     };
     expect(await list()).toEqual([first.id, second.id]);
     expect(await list('state=drafted')).toEqual([second.id]);
@@ -97,9 +117,9 @@ describe('one’s own contributions', () => {
 describe('a contributor', () => {
   test('is shown with what they gave, the last first', async () => {
     const harrow = await Member.query(people.knex).findOne({ displayName: 'Harrow Lane' }).throwIfNotFound();
-    const { body } = await people.browser().get(`/api/contributors/${harrow.id}?limit=5`).expect(200);
-    expect(body).toMatchObject({ contributor: { id: harrow.id, displayName: 'Harrow Lane' } });
-    const { items, kinds } = body as { items: { enteredAt: string }[]; kinds: { kind: string; count: number }[] };
+    const answer = await people.browser().get(`/api/contributors/${harrow.id}?limit=5`).expect(200);
+    const { contributor, items, kinds } = readContributor.answer.parse(answer.body);
+    expect(contributor).toMatchObject({ id: harrow.id, displayName: 'Harrow Lane' });
     expect(items.map(({ enteredAt }) => enteredAt)).toEqual(items.map(({ enteredAt }) => enteredAt).toSorted().toReversed());
     expect(kinds.find(({ kind }) => kind === 'casting')?.count).toBeGreaterThan(10);
     const ciphers = await people.browser().get(`/api/contributors/${harrow.id}?kind=cipher&q=ten-letter`).expect(200);
@@ -113,8 +133,8 @@ describe('a contributor', () => {
     await problemOf(people.browser().get('/api/contributors/018f0000-0000-7000-8000-000000000000'), 404);
     const makerId = await factCalled(people, 'maker', 'Skerry Foundry');
     const id = await entered(author, moderator, { kind: 'works', payload: { makerId, name: 'Upper Yard', place: null, note: null } });
-    const { body } = await people.browser().get(`/api/contributors/${author.id}`).expect(200);
-    expect(body).toMatchObject({ items: [{ fact: { id }, version: 1, inForce: true }], kinds: [{ kind: 'works', count: 1 }] });
+    const page = await people.browser().get(`/api/contributors/${author.id}`).expect(200);
+    expect(page.body).toMatchObject({ items: [{ fact: { id }, version: 1, inForce: true }], kinds: [{ kind: 'works', count: 1 }] });
   });
 });
 
@@ -132,6 +152,14 @@ describe('the demo', () => {
     const waiting = await Contribution.query(people.knex).where({ state: 'put-forward', makerId: brackwater }).whereNot({ authorId: ottoline.id });
     expect(waiting.length).toBeGreaterThanOrEqual(5);
     expect(new Set(waiting.map(({ kind }) => kind)).size).toBeGreaterThanOrEqual(4);
+  });
+
+  test('has evidence for each that waits', async () => {
+    for (const { id, title } of await Contribution.query(people.knex).where({ state: 'put-forward' })) {
+      const answer = await moderator.browser.post(`/api/contributions/${id}/evidence`);
+      expect(answer.status, title).toBe(200);
+      expect(gatherEvidence.answer.parse(answer.body).items[0], title).toMatchObject({ occasion: 'opened', revision: 2 });
+    }
   });
 
   test('says what the register would say of each', async () => {

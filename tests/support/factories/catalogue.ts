@@ -83,7 +83,7 @@ export async function addCipher({ definition, ...given }: Partial<Cipher> & { re
   return cipher;
 }
 
-async function addFact(kind: Exclude<FactKind, 'cipher'>, trx: Knex): Promise<string> {
+export async function addFact(kind: Exclude<FactKind, 'cipher'>, trx: Knex): Promise<string> {
   const id = uuidv7();
   await Fact.query(trx).insert({ id, kind });
   await FactVersion.query(trx).insert({
