@@ -6,7 +6,7 @@ import { EvidenceItem } from './evidence.ts';
 
 /** How a draft of a cipher reads the marks on record, while it is typed. */
 
-export const DRAFT_READINGS = ['decoded', 'ambiguous', 'impossible'] as const;
+const DRAFT_READINGS = ['decoded', 'ambiguous', 'impossible'] as const;
 
 const Readings = z.object({ decoded: z.number().int(), ambiguous: z.number().int(), impossible: z.number().int() });
 

@@ -15,7 +15,7 @@ export const NewSource = z.discriminatedUnion('kind', [
 export type NewSource = z.output<typeof NewSource>;
 
 /** Which part of the fact a source stands behind: a field, or one row of a list counted from 1, as `tells.2`; null for all of it. */
-export const CitedField = z
+const CitedField = z
   .string()
   .max(60)
   .regex(/^[a-z][A-Za-z]*(?:\.[1-9]\d*)?$/)

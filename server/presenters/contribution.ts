@@ -31,12 +31,12 @@ export function presentContributionItem({ contribution, state, subject }: Contri
 }
 
 export function presentContribution(onRecord: ContributionPageOnRecord): ContributionPage {
-  const { contribution, base, inForce, differences, faults, names, comments, decisions, openWith, can } = onRecord;
+  const { contribution, base, inForce, differences, faults, names, note, comments, decisions, openWith, can } = onRecord;
   return {
     ...presentContributionItem(onRecord),
     payload: LoosePayload.parse(contribution.payload),
     citations: z.array(LooseCitation).parse(contribution.citations),
-    note: contribution.note,
+    note,
     revision: contribution.revision,
     base: base && presentVersion(base),
     inForce: inForce && presentVersion(inForce),

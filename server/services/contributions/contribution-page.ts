@@ -26,7 +26,10 @@ export type ContributionPageOnRecord = ContributionOnRecord & {
   readonly differences: readonly Difference[];
   readonly faults: readonly FieldFault[];
   readonly names: NamesWithin;
+  /** A word to whoever decides; `null` for everybody else, and where there is none. */
+  readonly note: string | null;
   readonly comments: readonly ContributionComment[];
+  /** Everybody else is told the one that entered it. */
   readonly decisions: readonly ContributionDecision[];
   readonly openWith: readonly Member[];
   readonly can: ContributionRights;
@@ -56,6 +59,8 @@ export async function contributionPage(
   const names = await namesWithin(kind, [contribution, base, inForce].flatMap((said) => said ?? []), knex);
   // What was entered is told against what it changed, not against what it became.
   const before = state === 'entered' ? base : inForce;
+  const isBetween = mayReadComments(viewer, contribution);
+  const decisions = await ContributionDecision.query(knex).where({ contributionId: id }).orderBy(['at', 'id']).withGraphFetched('by');
   return {
     ...onRecord,
     base,
@@ -63,8 +68,9 @@ export async function contributionPage(
     differences: differencesOf(formOf(kind), before?.payload ?? null, payload, names.nameOf),
     faults: knownFaults ?? (await faultsOf(contribution, knex)),
     names,
-    comments: mayReadComments(viewer, contribution) ? await commentsOn(id, knex) : [],
-    decisions: await ContributionDecision.query(knex).where({ contributionId: id }).orderBy(['at', 'id']).withGraphFetched('by'),
+    note: isBetween ? contribution.note : null,
+    comments: isBetween ? await commentsOn(id, knex) : [],
+    decisions: isBetween ? decisions : decisions.filter(({ decision }) => decision === 'enter'),
     openWith: await openWith(viewer, onRecord, knex),
     can: contributionRights(viewer, contribution),
   };
