@@ -10,9 +10,9 @@ import { groupedBy } from '#server/services/grouped-by.ts';
 import { notify } from '#server/services/notices/notify.ts';
 
 /** Machines named in one notice; the rest are counted. */
-const MOST_NAMED = 20;
-/** Characters of a reason that are told. */
-const REASON_TOLD = 500;
+const MOST_NAMED = 15;
+/** Characters that are told of each, so that the whole is no longer than a notice may be. */
+const TOLD = { title: 200, reason: 500, nickname: 60 } as const;
 
 /** Closes a rework and tells each owner once what changed on which of their machines, and why. In the transaction that holds the rework. */
 export async function finishRework(rework: Rework, trx: Knex.Transaction): Promise<void> {
@@ -28,10 +28,10 @@ export async function finishRework(rework: Rework, trx: Knex.Transaction): Promi
 }
 
 async function whyOf({ factId, kind, version }: Rework, trx: Knex.Transaction): Promise<string> {
-  const title = (await nameFact(factId, trx))?.title ?? 'An entry of the catalogue';
+  const title = shortened((await nameFact(factId, trx))?.title ?? 'An entry of the catalogue', TOLD.title);
   if (version === null) return `${title} was taken out of the catalogue.`;
   const entered = kind === 'cipher' ? await CipherVersion.query(trx).findById([factId, version]) : await FactVersion.query(trx).findById([factId, version]);
-  const reason = entered === undefined ? '' : `: ${shortened(entered.reason)}`;
+  const reason = entered === undefined ? '' : `: ${shortened(entered.reason, TOLD.reason)}`;
   return `${title} changed and is at version ${version}${reason}`;
 }
 
@@ -52,15 +52,15 @@ function bodyOf(machines: readonly ReworkMachine[], why: string): string {
 /** Owners see their own serials whole. */
 function nameOf({ prefix, number, suffix, nickname }: Machine): string {
   const serial = writeSerial({ prefix, digits: number, suffix });
-  return nickname === null ? serial : `${nickname} (${serial})`;
+  return nickname === null ? serial : `${shortened(nickname, TOLD.nickname)} (${serial})`;
 }
 
 function counted(count: number, one: string, many: string): string | null {
   return count === 0 ? null : `${count} ${count === 1 ? one : many}`;
 }
 
-function shortened(text: string): string {
-  return text.length <= REASON_TOLD ? text : `${text.slice(0, REASON_TOLD - 1).trimEnd()}…`;
+function shortened(text: string, most: number): string {
+  return text.length <= most ? text : `${text.slice(0, most - 1).trimEnd()}…`;
 }
 
 function loaded(machine: Machine | undefined): Machine {

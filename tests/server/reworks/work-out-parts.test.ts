@@ -2,6 +2,7 @@ import type { Knex } from 'knex';
 import { v7 as uuidV7 } from 'uuid';
 import { describe, expect, test } from 'vitest';
 import type { CipherDefinition } from '#domain/ciphers/definition.ts';
+import { CipherVersion } from '#db/models/cipher-version.ts';
 import { Cipher } from '#db/models/cipher.ts';
 import { MarkDecoding } from '#db/models/mark-decoding.ts';
 import { Notice } from '#db/models/notice.ts';
@@ -206,5 +207,32 @@ describe('a fitted part', () => {
     const [notice] = await Notice.query(knex).where({ kind: 'recomputed' });
     expect(notice?.title).toBe('Worked out again: Q5');
     expect(notice?.body).toMatch(/ was taken out of the catalogue\.\nWhat came out otherwise:\nQ5: 1 date, 1 fit\.$/);
+  });
+
+  test('with many others of one owner is told in one notice no longer than a notice may be', async () => {
+    const { knex } = database;
+    const { makerId } = await addCipher({ definition: TEN }, knex);
+    const position = await addPosition({}, knex);
+    const { modelId } = position;
+    const series = await addSeries({ modelId, prefix: 'Q' }, knex);
+    for (let number = 1; number <= 17; number += 1) {
+      const machine = await addMachine({ modelId, serialAsStamped: `${series.prefix}${number}`, nickname: 'N'.repeat(200) }, knex);
+      const part = await addPart({ makerId }, knex);
+      await fitPart(part, machine, position, knex);
+      await addMark(part, 'date-code', 'RLKON', knex);
+    }
+    await workOut({ makers: [makerId] }, knex);
+    await knex('mark_decodings').update({ candidates: JSON.stringify([{ from: '1939-07-26', to: '1939-07-26', share: 1 }]) });
+    await CipherVersion.query(knex).where({ number: 1 }).whereIn('cipherId', knex('ciphers').select('id').where({ makerId })).patch({ supersededAt: '2026-11-01T00:00:00Z' });
+    const cipher = await Cipher.query(knex).findOne({ makerId }).throwIfNotFound();
+    const before = await CipherVersion.query(knex).findById([cipher.id, 1]).throwIfNotFound();
+    await CipherVersion.query(knex).insert({
+      cipherId: cipher.id, number: 2, header: before.header, citations: [], enteredById: before.enteredById, enteredAt: '2026-11-01T00:00:00Z', reason: 'R'.repeat(4_000), definition: TEN,
+    });
+    const { id } = await Rework.query(knex).insert({ id: uuidV7(), factId: cipher.id, kind: 'cipher', version: 2, makers: [makerId], models: [] });
+    await runRework(id, { knex, ciphers: createCipherCache({ onUnusable: () => expect.unreachable() }), signal: new AbortController().signal });
+    const notices = await Notice.query(knex).where({ kind: 'recomputed' });
+    expect(notices.map(({ title }) => title)).toEqual(['Worked out again: 17 of your machines']);
+    expect(notices[0]?.body).toMatch(/: R{499}…\n[^]*\nAnd on 2 more\.$/);
   });
 });
