@@ -302,6 +302,7 @@ describe('second factors', () => {
     await page.goto('/account');
     await press(page, 'Remove The key on the ring');
     await passkeys.waitFor({ state: 'detached' });
+    await debuggerOf.detach();
     expect(complaints).toEqual([]);
   });
 
@@ -315,6 +316,7 @@ describe('second factors', () => {
     await page.goto('/sign-in');
     await press(page, 'Sign in with a passkey');
     await page.getByRole('alert').getByText(/The passkey was not used/).waitFor();
+    await debuggerOf.detach();
   });
 
   it('asks once more who is there when the last proof is old, in line, and goes on', async () => {

@@ -1,6 +1,6 @@
 import axe from 'axe-core';
 import { chromium } from 'playwright-core';
-import type { Browser, BrowserContext, BrowserContextOptions, Page } from 'playwright-core';
+import type { Browser, BrowserContextOptions, ConsoleMessage, Page } from 'playwright-core';
 import { expect } from 'vitest';
 
 const FLAGS = [
@@ -30,46 +30,57 @@ export type Visit = {
   readonly end: () => Promise<void>;
 };
 
-/** Contexts that nobody uses: loading and compiling the site's scripts anew would be most of a visit's time. */
-const idle = new WeakMap<Browser, Map<string, BrowserContext[]>>();
+/** Pages that nobody uses: a new process for each visit, and the site's scripts compiled anew, would be most of a visit's time. */
+const idle = new WeakMap<Browser, Map<string, Page[]>>();
 
-function idleContexts(browser: Browser, options: BrowserContextOptions): BrowserContext[] {
-  const ofBrowser = idle.get(browser) ?? new Map<string, BrowserContext[]>();
+function idlePages(browser: Browser, options: BrowserContextOptions): Page[] {
+  const ofBrowser = idle.get(browser) ?? new Map<string, Page[]>();
   idle.set(browser, ofBrowser);
   const key = JSON.stringify(options);
-  const contexts = ofBrowser.get(key) ?? [];
-  ofBrowser.set(key, contexts);
-  return contexts;
+  const pages = ofBrowser.get(key) ?? [];
+  ofBrowser.set(key, pages);
+  return pages;
 }
 
-/** A visitor at an origin, whom the browser has never seen: no cookie, nothing stored; only the site's files may be in its cache. */
+/**
+ * A visitor at an origin, whom the browser has never seen: no cookie, nothing stored; only the site's files may be in its cache. A test
+ * that opens a debugger's session detaches it.
+ */
 export async function visit(browser: Browser, baseURL: string, options: BrowserContextOptions = {}): Promise<Visit> {
   const settings = { baseURL, ...SCREENS.desk, ...options };
-  const contexts = idleContexts(browser, settings);
-  const context = contexts.pop() ?? (await browser.newContext(settings));
-  const page = await context.newPage();
+  const pages = idlePages(browser, settings);
+  const page = pages.pop() ?? (await (await browser.newContext(settings)).newPage());
   page.setDefaultTimeout(20_000);
   const complaints: string[] = [];
-  page.on('console', (message) => {
+  const hear = (message: ConsoleMessage): void => {
     if (message.type() === 'error' || message.type() === 'warning') complaints.push(message.text());
-  });
-  page.on('pageerror', (error) => complaints.push(error.message));
+  };
+  const note = (error: Error): void => void complaints.push(error.message);
+  page.on('console', hear).on('pageerror', note);
   const end = async (): Promise<void> => {
-    const storage = await context.newCDPSession(page);
+    page.off('console', hear).off('pageerror', note);
+    const context = page.context();
     for (const one of context.pages()) if (one !== page) await one.close();
-    // Away from the site first: a page that is leaving may still store something.
-    await page.goto('about:blank');
-    await storage.send('Storage.clearDataForOrigin', { origin: new URL(baseURL).origin, storageTypes: 'cookies,local_storage,indexeddb,service_workers' });
-    await page.close();
-    await context.clearCookies();
+    await page.unrouteAll({ behavior: 'ignoreErrors' });
     await context.setOffline(false);
-    contexts.push(context);
+    await page.emulateMedia({ media: null });
+    // A page of the same origin without scripts: nothing of the site runs on, and its process is kept.
+    await page.goto('/healthz');
+    const storage = await context.newCDPSession(page);
+    await storage.send('Storage.clearDataForOrigin', { origin: new URL(baseURL).origin, storageTypes: 'cookies,local_storage,indexeddb,service_workers' });
+    await storage.detach();
+    await page.evaluate(() => {
+      sessionStorage.clear();
+    });
+    await context.clearCookies();
+    pages.push(page);
   };
   return { page, complaints, end };
 }
 
-/** What axe finds on the page as it stands: rule, then the elements. Run by the debugger, which a content security policy does not bind. */
+/** What axe finds on the page once it stands: rule, then the elements. Run by the debugger, which a content security policy does not bind. */
 export async function axeFindings(page: Page): Promise<string[]> {
+  await pageStands(page);
   await page.evaluate(axe.source);
   const { violations } = await page.evaluate(() =>
     // What passes is not described: describing it takes three times as long as finding it.

@@ -72,6 +72,7 @@ type ListProps = { readonly items: readonly Evidence[] | undefined; readonly err
 function EvidenceList({ items, error, onAgain, stale, revision }: ListProps) {
   if (items === undefined) return error === null ? <Skeleton lines={5} label="Loading the evidence" /> : <FailureNote error={error} onAgain={onAgain} />;
   const [newest, ...older] = items;
+  if (newest === undefined && stale) return <Skeleton lines={5} label="Working out the evidence" />;
   if (newest === undefined) return <p className="border-y border-rule py-3 text-slag">None was worked out yet.</p>;
   return (
     <div className={stale ? 'is-stale-block' : ''} aria-busy={stale}>
