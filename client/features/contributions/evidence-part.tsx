@@ -24,6 +24,9 @@ export function EvidencePart({ contribution }: { readonly contribution: Contribu
   return can.decide ? <FreshEvidence key={revision} {...{ id, revision }} /> : <KeptEvidence {...{ id, revision }} />;
 }
 
+/** Lines of a group before the rest is folded away: on a phone the decision stands below them all. */
+const LISTED_AT_ONCE = 6;
+
 type Of = { readonly id: string; /** What is shown of it now. */ readonly revision: number };
 
 function FreshEvidence({ id, revision }: Of) {
@@ -116,14 +119,15 @@ function Group({ group: { title, count, of, items, unlisted } }: { readonly grou
         {title}
         <span className="font-normal tabular-nums">{of === null ? sayFigure(count) : `${sayFigure(count)} of ${sayFigure(of)}`}</span>
       </h3>
-      {items.length > 0 && (
-        <ul className="mt-1">
-          {items.map((item, place) => (
-            <li key={place} className="flex flex-wrap items-center gap-x-3 gap-y-1 py-1.5 text-[15px] leading-snug">
-              <Item item={item} />
-            </li>
-          ))}
-        </ul>
+      <Items items={items.slice(0, LISTED_AT_ONCE)} />
+      {items.length > LISTED_AT_ONCE && (
+        <details>
+          <summary className="inline-flex min-h-11 cursor-pointer items-center text-[15px] text-temper underline decoration-1 underline-offset-[3px]">
+            The next {sayFigure(items.length - LISTED_AT_ONCE)}
+            <span className="sr-only"> of {title}</span>
+          </summary>
+          <Items items={items.slice(LISTED_AT_ONCE)} />
+        </details>
       )}
       {unlisted + more > 0 && (
         <p className="text-[15px] text-slag">
@@ -131,6 +135,20 @@ function Group({ group: { title, count, of, items, unlisted } }: { readonly grou
         </p>
       )}
     </section>
+  );
+}
+
+function Items({ items }: { readonly items: readonly EvidenceItem[] }) {
+  return (
+    items.length > 0 && (
+      <ul className="mt-1">
+        {items.map((item, place) => (
+          <li key={place} className="flex flex-wrap items-center gap-x-3 gap-y-1 py-1.5 text-[15px] leading-snug">
+            <Item item={item} />
+          </li>
+        ))}
+      </ul>
+    )
   );
 }
 

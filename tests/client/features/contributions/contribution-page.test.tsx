@@ -127,6 +127,16 @@ describe('for whoever decides', () => {
     screen.getByText('Of 200 random keys the middle one dates 21.3 %.');
   });
 
+  it('folds all but the first lines of a long group away, and leaves none out', async () => {
+    const [dates] = EVIDENCE.groups;
+    const items = Array.from({ length: 8 }, (_, place) => ({ subject: null, mark: null, text: `line ${place + 1}` }));
+    open(waiting, { [`POST ${PATH}/evidence`]: () => ok({ items: [{ ...EVIDENCE, groups: [{ ...dates, items }] }] }) });
+    const summary = await screen.findByText('The next 2');
+    const folded = summary.closest('details')?.textContent ?? '';
+    for (const { text } of items) screen.getByText(text);
+    expect(items.filter(({ text }) => folded.includes(text)).map(({ text }) => text)).toEqual(['line 7', 'line 8']);
+  });
+
   it('keeps the evidence there was where it can’t be worked out again, and says so', async () => {
     open(waiting, { [`GET ${PATH}/evidence`]: () => ok({ items: [EVIDENCE] }), [`POST ${PATH}/evidence`]: () => refusal('unavailable', 503, 'Away.') });
     await screen.findByText('The register is away for a moment');
