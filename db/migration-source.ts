@@ -26,6 +26,10 @@ import * as machinesCreate from './migrations/0030_machines_create.ts';
 import * as partsCreate from './migrations/0031_parts_create.ts';
 import * as marksCreate from './migrations/0032_marks_create.ts';
 import * as reworksCreate from './migrations/0033_reworks_create.ts';
+import * as photosCreate from './migrations/0040_photos_create.ts';
+import * as partsGrow from './migrations/0041_parts_grow.ts';
+import * as readingsGrow from './migrations/0042_readings_grow.ts';
+import * as idempotencyKeysCreate from './migrations/0043_idempotency_keys_create.ts';
 
 type NamedMigration = { readonly name: string; readonly migration: Knex.Migration };
 
@@ -61,6 +65,10 @@ const MIGRATIONS: readonly NamedMigration[] = [
   { name: '0031_parts_create', migration: partsCreate },
   { name: '0032_marks_create', migration: marksCreate },
   { name: '0033_reworks_create', migration: reworksCreate },
+  { name: '0040_photos_create', migration: photosCreate },
+  { name: '0041_parts_grow', migration: partsGrow },
+  { name: '0042_readings_grow', migration: readingsGrow },
+  { name: '0043_idempotency_keys_create', migration: idempotencyKeysCreate },
 ];
 
 export const migrationSource: Knex.MigrationSource<NamedMigration> = {

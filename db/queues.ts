@@ -4,7 +4,7 @@ import PgBoss from 'pg-boss';
 export const QUEUE_SCHEMA = 'pgboss';
 
 /** Every queue there is. One that is not made can't be sent to, so all are made with the database. */
-export const QUEUE_NAMES = ['send-mail', 'give-up-mail', 'run-rework', 'give-up-rework'] as const;
+export const QUEUE_NAMES = ['send-mail', 'give-up-mail', 'run-rework', 'give-up-rework', 'make-renditions', 'give-up-renditions', 'sweep-photos'] as const;
 export type QueueName = (typeof QUEUE_NAMES)[number];
 
 /**

@@ -1,7 +1,8 @@
 import type { RelationMappings } from 'objection';
-import type { MarkKind, MarkTechnique } from '#domain/vocabulary.ts';
+import type { EvidenceStrength, MarkKind, MarkTechnique } from '#domain/vocabulary.ts';
 import { Machine } from './machine.ts';
 import { MarkDecoding } from './mark-decoding.ts';
+import { MarkPhoto } from './mark-photo.ts';
 import { Part } from './part.ts';
 import { Reading } from './reading.ts';
 import { RegisterModel } from './register-model.ts';
@@ -16,11 +17,19 @@ export class Mark extends RegisterModel {
   declare machineId: string | null;
   declare kind: MarkKind;
   declare technique: MarkTechnique;
-  /** The register's reading, kept up by the database from the readings; `null` while there are none. */
-  declare readonly reading: string | null;
+  /** The reading in force; `null` while nobody has read it. This and the three after it are settled whenever readings or photos change. */
+  declare reading: string | null;
+  /** When the newest reading that counts was made. */
+  declare readAt: string | null;
+  declare evidence: EvidenceStrength;
+  /** Since when another reading is wanted; `null`: none is. */
+  declare wantsReadingSince: string | null;
+  /** Grows with every change of what it is said to be. */
+  declare revision: number;
 
   declare part?: Part | null;
   declare machine?: Machine | null;
+  declare photos?: MarkPhoto[];
   declare readings?: Reading[];
   declare decoding?: MarkDecoding | null;
 
@@ -34,6 +43,12 @@ export class Mark extends RegisterModel {
       relation: RegisterModel.BelongsToOneRelation,
       modelClass: Machine,
       join: { from: 'marks.machineId', to: 'machines.id' },
+    },
+    photos: {
+      relation: RegisterModel.HasManyRelation,
+      modelClass: MarkPhoto,
+      modify: 'inOrder',
+      join: { from: 'marks.id', to: 'mark_photos.markId' },
     },
     readings: {
       relation: RegisterModel.HasManyRelation,

@@ -12,6 +12,14 @@ export class Reading extends RegisterModel {
   /** In the mark notation, as `writeReading` writes it. */
   declare text: string;
   declare madeAt: string;
+  /** The photo it was read from; `null`: from the iron, or from one that is gone. */
+  declare photoId: string | null;
+  /** Made before its reader was shown what others had read. */
+  declare independent: boolean;
+  /** By whoever held the part then. */
+  declare asHolder: boolean;
+  /** `null` while it stands. */
+  declare takenBackAt: string | null;
 
   declare reader?: Member;
 

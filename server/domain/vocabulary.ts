@@ -75,3 +75,24 @@ export type WearDirection = (typeof WEAR_DIRECTIONS)[number];
 
 export const MEASURE_UNITS = ['mm', 'in', 'degree', 'gram', 'newton-metre'] as const;
 export type MeasureUnit = (typeof MEASURE_UNITS)[number];
+
+/**
+ * How strong the evidence of a mark is, weakest first: typed by somebody · with a photo · another member’s reading, made without seeing the
+ * first, agrees · a document, which a moderator accepted.
+ */
+export const EVIDENCE_STRENGTHS = ['claimed', 'photographed', 'confirmed', 'documented'] as const;
+export type EvidenceStrength = (typeof EVIDENCE_STRENGTHS)[number];
+
+/** What a photo may be sent as: told by what is in the file, and its name may not say otherwise. */
+export const PHOTO_TYPES = ['jpeg', 'png', 'webp', 'heic'] as const;
+export type PhotoType = (typeof PHOTO_TYPES)[number];
+
+export const PHOTO_STATES = ['waiting', 'ready', 'failed'] as const;
+export type PhotoState = (typeof PHOTO_STATES)[number];
+
+/** What is made of a photo, in the order in which it is made. */
+export const RENDITIONS = ['thumb', 'page', 'full', 'relief'] as const;
+export type RenditionName = (typeof RENDITIONS)[number];
+
+export const RENDITION_TYPES = ['image/webp', 'image/avif'] as const;
+export type RenditionType = (typeof RENDITION_TYPES)[number];
