@@ -109,7 +109,7 @@ export default defineConfig([
   },
   {
     // The compiler checks these scripts and knows Node's globals; the last two rules don't see that a JSDoc comment gives a type.
-    files: ['.run/**/*.mjs'],
+    files: ['.run/**/*.mjs', 'server/**/*.mjs'],
     rules: { 'no-undef': 'off', '@typescript-eslint/no-unsafe-assignment': 'off', '@typescript-eslint/no-unsafe-return': 'off' },
   },
   { files: ['eslint.config.js'], ...tseslint.configs.disableTypeChecked },

@@ -16,7 +16,7 @@ export default defineConfig({
   build: { outDir: 'dist/client', assetsInlineLimit: 0, sourcemap: true },
   server: {
     host: '127.0.0.1',
-    proxy: { '/api': apiOrigin, '/healthz': apiOrigin, '/readyz': apiOrigin },
+    proxy: { '/api': apiOrigin, '/photos': apiOrigin, '/healthz': apiOrigin, '/readyz': apiOrigin },
     // PostgreSQL's own files change all the time.
     watch: { ignored: ['**/.data/**', '**/.cache/**'] },
   },

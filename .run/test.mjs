@@ -42,7 +42,10 @@ const PROJECTS = /** @type {const} */ ({ domain: 'domain *', client: 'client', s
 const STEP_LIMIT = 20 * 60_000;
 
 /** Settings of a server someone runs from the same shell, which the tests must not inherit. */
-const NOT_FOR_TESTS = ['DATABASE_URL', 'HOST', 'PORT', 'PUBLIC_ORIGIN', 'LOG_LEVEL', 'TRUST_PROXY', 'CLIENT_DIR', 'MAIL_URL', 'MAIL_FROM', 'LOCAL_POST_DIR', 'NODE_ENV', 'TZ'];
+const NOT_FOR_TESTS = [
+  'DATABASE_URL', 'HOST', 'PORT', 'PUBLIC_ORIGIN', 'LOG_LEVEL', 'TRUST_PROXY', 'CLIENT_DIR', 'MAIL_URL', 'MAIL_FROM', 'LOCAL_POST_DIR', 'NODE_ENV', 'TZ',
+  'PHOTO_DIR', 'S3_BUCKET', 'S3_ENDPOINT', 'S3_REGION', 'S3_ACCESS_KEY_ID', 'S3_SECRET_ACCESS_KEY', 'S3_PATH_STYLE',
+];
 
 /**
  * `npm test`: everything for the tests, then lint, types and tests. `--only domain,lint` performs those steps alone; what

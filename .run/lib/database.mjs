@@ -72,6 +72,7 @@ async function seedDemo(url) {
     say('demo', 'in place');
     return;
   }
+  say('demo', 'filling it in; drawing its photos takes a minute or two');
   await runScript('fixtures/demo/seed.ts', url, 'the demo could not be filled in');
   const [name] = await sql('select quote_ident(current_database()) as quoted');
   await sql(`comment on database ${String(name?.['quoted'])} is '${mark}'`);

@@ -110,6 +110,17 @@ export const AUDIT_ACTS = [
   'fact.flagged',
   'flag.settled',
   'series.reading-marked',
+  'photo.added',
+  'photo.removed',
+  'part.recorded',
+  'part.changed',
+  'part.removed',
+  'mark.recorded',
+  'mark.changed',
+  'mark.placed',
+  'mark.removed',
+  'reading.made',
+  'reading.taken-back',
 ] as const;
 export const AuditAct = z.enum(AUDIT_ACTS);
 export type AuditAct = z.infer<typeof AuditAct>;

@@ -22,13 +22,15 @@ export type Endpoint<
   readonly status: 200 | 201;
   /** One line for the description page. */
   readonly summary: string;
+  /** The form's field that holds a file; then the body travels as `multipart/form-data`, its other fields beside it. */
+  readonly file?: string;
   readonly params: Params;
   readonly query: Query;
   readonly body: Body;
   readonly answer: Answer;
 };
 
-type Route = { readonly method: HttpMethod; readonly path: `/${string}`; readonly status?: 200 | 201; readonly summary: string };
+type Route = { readonly method: HttpMethod; readonly path: `/${string}`; readonly status?: 200 | 201; readonly summary: string; readonly file?: string };
 type Parts = { readonly params?: z.ZodType; readonly query?: z.ZodType; readonly body?: z.ZodType; readonly answer: z.ZodType };
 type PartOf<Given, Name extends keyof Parts> = Given extends Readonly<Record<Name, infer Schema extends z.ZodType>> ? Schema : Nothing;
 

@@ -49,11 +49,26 @@ import type { Endpoint } from './endpoint.ts';
 import { bringBack, flagFact, listAccounts, listFacts, markRegistersReading, readFactHistory, retireFact } from './facts.ts';
 import { judgeFitOfPart } from './fit.ts';
 import { listMakers, readMaker, readMakerHistory } from './makers.ts';
-import { readMark } from './marks.ts';
+import {
+  changeMark,
+  listMarks,
+  listMarksToRead,
+  lookUpReadings,
+  makeReading,
+  openDesk,
+  placeMark,
+  readMark,
+  recordMark,
+  removeMark,
+  takeBackReading,
+  takePhotoOffMark,
+} from './marks.ts';
 import { listModels, readBuild, readModel, readModelHistory } from './models.ts';
 import { listQueue, listReworks, settleFlag } from './moderation.ts';
 import { chooseNotices, listNotices, markNoticesRead, readNoticeChoices, unsubscribe } from './notices.ts';
 import { listPartTypes, readPartType, readPartTypeHistory } from './part-types.ts';
+import { changePart, listMyParts, readPart, recordPart, removePart } from './parts.ts';
+import { listUnusedPhotos, readPhoto, removePhoto, uploadPhoto } from './photos.ts';
 import {
   addPasskey,
   confirmAuthenticator,
@@ -90,7 +105,27 @@ export const ENDPOINTS = {
   readCipher,
   readCipherHistory,
   tryCipher,
+  uploadPhoto,
+  readPhoto,
+  listUnusedPhotos,
+  removePhoto,
+  listMyParts,
+  recordPart,
+  readPart,
+  changePart,
+  removePart,
+  listMarks,
+  listMarksToRead,
+  recordMark,
   readMark,
+  changeMark,
+  removeMark,
+  placeMark,
+  takePhotoOffMark,
+  openDesk,
+  makeReading,
+  takeBackReading,
+  lookUpReadings,
   listReworks,
   listSerialRanges,
   readSerialRange,

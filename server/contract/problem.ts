@@ -19,6 +19,7 @@ export const PROBLEMS = {
   'too-many-requests': { status: 429, title: 'Too many requests' },
   internal: { status: 500, title: 'Something broke on our side' },
   unavailable: { status: 503, title: 'The register is away for a moment' },
+  'no-room': { status: 507, title: 'There is no room left' },
 } as const satisfies Record<string, { readonly status: number; readonly title: string }>;
 
 export type ProblemKind = keyof typeof PROBLEMS;

@@ -18,6 +18,7 @@ export type ApiDescription = {
 
 const BASE = '/api';
 const JSON_TYPE = 'application/json';
+const FORM_TYPE = 'multipart/form-data';
 const PROBLEM_TYPE = 'application/problem+json';
 
 /**
@@ -38,9 +39,7 @@ export function describeApi(endpoints: Readonly<Record<string, Endpoint>>): ApiD
       operationId,
       summary: endpoint.summary,
       parameters: [...parametersIn('path', endpoint.params, schemas), ...parametersIn('query', endpoint.query, schemas)],
-      ...(takesBody(endpoint)
-        ? { requestBody: { required: true, content: { [JSON_TYPE]: { schema: schemas.add(endpoint.body, 'input') } } } }
-        : {}),
+      ...(takesBody(endpoint) ? { requestBody: { required: true, content: contentOf(endpoint, schemas) } } : {}),
       responses: {
         [String(endpoint.status)]: {
           description: 'The answer',
@@ -73,6 +72,17 @@ function takesBody(endpoint: Endpoint): boolean {
   return endpoint.body !== Nothing;
 }
 
+function contentOf({ body, file }: Endpoint, schemas: SchemaCollection): JsonObject {
+  const schema = schemas.add(body, 'input');
+  if (file === undefined) return { [JSON_TYPE]: { schema } };
+  const { properties, required } = ObjectSchema.parse(schema);
+  // Bytes as they are: JSON Schema has no type for them.
+  const bytes = { contentMediaType: 'application/octet-stream' };
+  return {
+    [FORM_TYPE]: { schema: { type: 'object', properties: { ...properties, [file]: bytes }, required: [...required, file], additionalProperties: false } },
+  };
+}
+
 function problemsOf(endpoint: Endpoint): readonly ProblemKind[] {
   return [
     'malformed',
@@ -81,6 +91,7 @@ function problemsOf(endpoint: Endpoint): readonly ProblemKind[] {
     'invalid',
     'internal',
     'unavailable',
+    ...(endpoint.file === undefined ? [] : (['no-room'] as const)),
   ];
 }
 
@@ -110,7 +121,9 @@ class SchemaCollection {
       z.toJSONSchema(schema, {
         io: direction,
         override: ({ jsonSchema }) => {
-          if (direction === 'output' && jsonSchema.additionalProperties === false) delete jsonSchema.additionalProperties;
+          // A part with a name is described once for both ways.
+          const isOpen = direction === 'output' || jsonSchema.id !== undefined;
+          if (isOpen && jsonSchema.additionalProperties === false) delete jsonSchema.additionalProperties;
         },
       }),
     );

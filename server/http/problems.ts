@@ -1,5 +1,9 @@
 import { PROBLEMS, PROBLEM_KINDS, problemType } from '#contract/problem.ts';
 import type { Problem, ProblemKind } from '#contract/problem.ts';
+import { GateFullError } from '#server/files/gate.ts';
+import { PhotoStoreError } from '#server/files/photo-store.ts';
+import type { StoreFault } from '#server/files/photo-store.ts';
+import { UnusablePictureError } from '#server/files/unusable-picture-error.ts';
 import { ProblemError } from '#server/services/problem-error.ts';
 
 /** Seconds a client is asked to wait before it tries again while the database is away. */
@@ -48,8 +52,30 @@ const LOST_CONNECTION =
 /** Any error as a problem; what nobody expected becomes a bare `internal`. */
 export function problemOf(error: unknown): ProblemError {
   if (error instanceof ProblemError) return error;
+  const ofPhotos = photoProblemOf(error);
+  if (ofPhotos !== undefined) return ofPhotos;
   const kind = kindOf(error);
   return new ProblemError(kind, DETAILS[kind] ?? PROBLEMS[kind].title, { cause: error });
+}
+
+const STORE_PROBLEMS: Readonly<Record<StoreFault, readonly [ProblemKind, string]>> = {
+  missing: ['not-found', 'There is nothing at this address.'],
+  full: ['no-room', 'The register can keep no more photos just now. What is on record stays as it is.'],
+  corrupt: ['unavailable', 'The photo did not arrive in the store as it was sent. Try again in a moment.'],
+  away: ['unavailable', 'The photo store does not answer just now. Try again in a moment.'],
+};
+
+/** Files and pictures that could not be taken, kept or had. */
+function photoProblemOf(error: unknown): ProblemError | undefined {
+  if (error instanceof UnusablePictureError) {
+    return new ProblemError(error.unusable === 'kind' ? 'unsupported-media-type' : 'invalid', error.reason, { cause: error });
+  }
+  if (error instanceof GateFullError) {
+    return new ProblemError('unavailable', 'Too many photos are being looked at just now. Try again in a moment.', { cause: error });
+  }
+  if (!(error instanceof PhotoStoreError)) return undefined;
+  const [kind, detail] = STORE_PROBLEMS[error.fault];
+  return new ProblemError(kind, detail, { cause: error });
 }
 
 /** The answer's body. */

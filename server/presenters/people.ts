@@ -53,6 +53,7 @@ function asJson(document: unknown): Json {
 /** Everything on record about a member, as data. Field by field: what is secret or about somebody else is not among them. */
 export function presentMine(mine: MineOnRecord): Record<string, Json> {
   const { member, makers, sessions, secondFactors, passkeys, notices, noticeChoices, letters, entered, contributions, comments, flags, acts } = mine;
+  const { parts, marks, readings, photos } = mine;
   return {
     account: {
       id: member.id,
@@ -106,6 +107,49 @@ export function presentMine(mine: MineOnRecord): Record<string, Json> {
     })),
     comments: comments.map(({ contributionId, at, path, text }) => ({ contribution: contributionId, at, path, text })),
     flags: flags.map(({ factId, at, reason, outcome }) => ({ fact: factId, at, reason, outcome })),
+    parts: parts.map((part) => ({
+      part: part.id,
+      type: part.partType?.slug ?? null,
+      called: part.called,
+      maker: part.maker?.slug ?? null,
+      foundOn: { model: part.foundModel?.slug ?? null, serial: part.foundSerial },
+      condition: part.condition,
+      note: part.note,
+      visibility: part.visibility,
+      recordedAt: part.recordedAt,
+      photos: loaded(part.photos).map(({ photoId }) => photoId),
+    })),
+    marks: marks.map((mark) => ({
+      mark: mark.id,
+      part: mark.partId,
+      kind: mark.kind,
+      technique: mark.technique,
+      photos: loaded(mark.photos).map(({ photoId, regionLeft, regionTop, regionWidth, regionHeight, turn, mirrored }) => ({
+        photo: photoId,
+        region: regionLeft === null ? null : { left: regionLeft, top: regionTop, width: regionWidth, height: regionHeight },
+        turn,
+        mirrored,
+      })),
+    })),
+    readings: readings.map(({ id, markId, text, madeAt, independent, asHolder, takenBackAt }) => ({
+      reading: id,
+      mark: markId,
+      text,
+      madeAt,
+      independent,
+      asHolder,
+      takenBackAt,
+    })),
+    photos: photos.map(({ id, name, takenOn, addedAt, address, picture }) => ({
+      photo: id,
+      name,
+      takenOn,
+      addedAt,
+      address,
+      bytes: Number(loaded(picture).bytes),
+      width: loaded(picture).width,
+      height: loaded(picture).height,
+    })),
     acts: acts.map(({ at, act, actorId, subjectId, detail }) => ({
       at,
       act,

@@ -5,9 +5,10 @@ import { inSearch } from './search.ts';
 
 /**
  * What a list may be ordered by: a column as text or as an instant, or where a range of days or numbers begins. A range that is not
- * known comes last when days ascend.
+ * known comes last when days ascend; an instant that may be none, and then is before all others; a text that may be none or long, by its
+ * beginning.
  */
-export type SortKey = { readonly column: string; readonly as: 'text' | 'instant' | 'first-day' | 'first-number' };
+export type SortKey = { readonly column: string; readonly as: 'text' | 'beginning' | 'instant' | 'instant-if-any' | 'first-day' | 'first-number' };
 export type Order = { readonly keys: readonly SortKey[]; readonly direction: 'asc' | 'desc' };
 
 export type ListRequest<Sort extends string> = {
@@ -36,17 +37,31 @@ type Listing<Sort extends string, Row> = {
 
 const EXPRESSIONS = {
   text: '??::text',
+  beginning: `left(coalesce(??, ''), 80)`,
   instant: '??',
+  'instant-if-any': 'coalesce(??, to_timestamp(0))',
   'first-day': `coalesce(lower(??), 'infinity'::date)`,
   'first-number': 'lower(??)',
 } as const satisfies Record<SortKey['as'], string>;
 
-const VALUES = { text: '?::text', instant: '?::timestamptz', 'first-day': '?::date', 'first-number': '?::bigint' } as const satisfies Record<SortKey['as'], string>;
+const VALUES = {
+  text: '?::text',
+  beginning: '?::text',
+  instant: '?::timestamptz',
+  'instant-if-any': '?::timestamptz',
+  'first-day': '?::date',
+  'first-number': '?::bigint',
+} as const satisfies Record<SortKey['as'], string>;
+
+const TEXT = z.string().max(200).refine((text) => !text.includes('\0'));
+// As PostgreSQL writes it in UTC, to the microsecond: rows of one millisecond keep their order.
+const INSTANT = z.string().regex(/^\d{4}-\d\d-\d\d \d\d:\d\d:\d\d(?:\.\d{1,6})?\+00$/);
 
 const CURSOR_VALUES = {
-  text: z.string().max(200).refine((text) => !text.includes('\0')),
-  // As PostgreSQL writes it in UTC, to the microsecond: rows of one millisecond keep their order.
-  instant: z.string().regex(/^\d{4}-\d\d-\d\d \d\d:\d\d:\d\d(?:\.\d{1,6})?\+00$/),
+  text: TEXT,
+  beginning: TEXT,
+  instant: INSTANT,
+  'instant-if-any': INSTANT,
   'first-day': z.union([z.iso.date(), z.literal('infinity')]),
   'first-number': z.string().regex(/^\d{1,18}$/),
 } as const satisfies Record<SortKey['as'], z.ZodType<string>>;

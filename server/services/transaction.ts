@@ -1,4 +1,5 @@
 import type { Knex } from 'knex';
+import { takeKey, writeKey } from './only-once.ts';
 
 const MOST_RUNS = 5;
 /** Milliseconds before the second run; each further wait is up to twice as long. */
@@ -15,17 +16,20 @@ export type TransactionOptions = {
 /**
  * Runs the work in one transaction, again from its beginning where it lost to another one, at most five times in all. So the work
  * does nothing that a rollback would not undo. Inside a transaction it becomes a savepoint and runs once: only the whole can be run again.
+ * The first transaction of a request that is to be done only once also writes that request's key.
  */
 export async function withTransaction<Answer>(
   knex: Knex,
   work: (trx: Knex.Transaction) => Promise<Answer>,
   { actorId }: TransactionOptions = {},
 ): Promise<Answer> {
+  const key = takeKey();
   const mostRuns = knex.isTransaction === true ? 1 : MOST_RUNS;
   for (let run = 1; ; run += 1) {
     try {
       return await knex.transaction(async (trx) => {
         if (actorId !== undefined) await trx.raw(`select set_config('app.actor_id', ?, true)`, [actorId]);
+        if (key !== undefined) await writeKey(key, trx);
         return work(trx);
       });
     } catch (error) {

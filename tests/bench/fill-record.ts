@@ -21,6 +21,7 @@ import type { Chance } from '#fixtures/demo/chance.ts';
 
 const ROWS_AT_ONCE = 2_000;
 const AS_OF = 20_000;
+const MADE_AT = '2026-01-01T12:00:00.000Z';
 
 type Place = { readonly positionId: string; readonly casting: Casting };
 
@@ -59,8 +60,8 @@ export async function fillRecord(count: number, { cipherId, modelId }: { readonl
       fittings.push({ id: uuidV7(), partId, machineId, positionId, modelId, fitted: { from: '2026-01-01', to: null } });
       for (const [kind, text] of [['casting-number', normal(casting.number)], ['date-code', texts(casting)]] as const) {
         const markId = uuidV7();
-        marks.push({ id: markId, partId, kind, technique: 'cast' });
-        readings.push({ id: uuidV7(), markId, readerId: member.id, text });
+        marks.push({ id: markId, partId, kind, technique: 'cast', reading: text, readAt: MADE_AT });
+        readings.push({ id: uuidV7(), markId, readerId: member.id, text, asHolder: true, madeAt: MADE_AT });
       }
     }
     await Machine.query(knex).insert(machines);

@@ -2,14 +2,13 @@ import { DatabaseError } from 'pg';
 import { v7 as uuidV7 } from 'uuid';
 import { describe, expect, test } from 'vitest';
 import { FIT_VERDICTS } from '#domain/fit/fit.ts';
-import { MARK_KINDS, MARK_TECHNIQUES, VISIBILITIES } from '#domain/vocabulary.ts';
+import { EVIDENCE_STRENGTHS, MARK_KINDS, MARK_TECHNIQUES, VISIBILITIES } from '#domain/vocabulary.ts';
 import { Mark } from '#db/models/mark.ts';
 import { MarkDecoding } from '#db/models/mark-decoding.ts';
-import { Member } from '#db/models/member.ts';
 import { PartFitting } from '#db/models/part-fitting.ts';
 import { REWORK_STATES } from '#db/vocabulary.ts';
 import { useDatabase } from '#tests/support/database.ts';
-import { addMachine, addMark, addPart, addPosition, addReading, addSeries } from '#tests/support/factories/record.ts';
+import { addMachine, addMark, addPart, addPosition, addSeries } from '#tests/support/factories/record.ts';
 
 const database = useDatabase();
 
@@ -74,27 +73,8 @@ describe('where a part is', () => {
   });
 });
 
-describe('the register’s reading of a mark', () => {
-  test('is the text most members give by their latest reading, and among as many the one given last', async () => {
-    const { knex } = database;
-    const [ann, ben, cass] = (await Member.query(knex).orderBy('id').limit(3)).map(({ id }) => id);
-    if (!ann || !ben || !cass) throw new Error('the demo has members');
-    const mark = await addMark(await addPart({}, knex), 'date-code', 'AA', knex);
-    const reading = async () => (await Mark.query(knex).findById(mark.id))?.reading;
-    expect(await reading()).toBe('AA');
-    await addReading(mark, 'BB', ben, knex, '2031-01-01T00:00:00Z');
-    expect(await reading()).toBe('BB');
-    await addReading(mark, 'AA', cass, knex, '2030-06-01T00:00:00Z');
-    expect(await reading()).toBe('AA');
-    await addReading(mark, 'CC', cass, knex, '2032-01-01T00:00:00Z');
-    expect(await reading()).toBe('CC');
-    await addReading(mark, 'BB', ann, knex, '2030-07-01T00:00:00Z');
-    expect(await reading()).toBe('BB');
-    await knex('readings').where({ markId: mark.id }).delete();
-    expect(await reading()).toBeNull();
-  });
-
-  test('belongs to a mark that stands on a part or a machine, and what is cast on a part', async () => {
+describe('a mark', () => {
+  test('stands on a part or a machine, and what is cast on a part', async () => {
     const { knex } = database;
     const { machine } = await twoMachines();
     const part = await addPart({}, knex);
@@ -125,6 +105,7 @@ describe('the words of the columns are those of the vocabulary', () => {
   test.each<[string, readonly string[]]>([
     ['marks_kind_check', MARK_KINDS],
     ['marks_technique_check', MARK_TECHNIQUES],
+    ['marks_evidence_check', EVIDENCE_STRENGTHS],
     ['visibility_check', VISIBILITIES],
     ['part_fits_verdict_check', FIT_VERDICTS],
     ['reworks_state_check', REWORK_STATES],

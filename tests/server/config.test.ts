@@ -25,6 +25,7 @@ describe('settings', () => {
       trustProxy: [],
       mail: { url: 'smtp://127.0.0.1:2525', from: 'post@pourbook.invalid' },
       localPostDirectory: undefined,
+      photos: { directory: expect.stringMatching(/\.data\/photos$/) as unknown, bucket: undefined },
     });
   });
 
@@ -107,6 +108,20 @@ describe('settings', () => {
       expect(faultsOf({ DATABASE_URL, MAIL_URL })).toEqual([expect.stringMatching(/^MAIL_URL: /)]);
     },
   );
+
+  test('keep photos in a bucket where one is named, with the key to it', () => {
+    const S3 = { S3_BUCKET: 'photos', S3_ACCESS_KEY_ID: 'key', S3_SECRET_ACCESS_KEY: 'secret' };
+    expect(parseConfig({ DATABASE_URL, PHOTO_DIR: '/srv/photos', ...S3, S3_ENDPOINT: 'https://store.example', S3_PATH_STYLE: 'true' }).photos).toEqual({
+      directory: '/srv/photos',
+      bucket: { bucket: 'photos', region: 'us-east-1', endpoint: 'https://store.example', pathStyle: true, accessKeyId: 'key', secretAccessKey: 'secret' },
+    });
+    expect(faultsOf({ DATABASE_URL, S3_BUCKET: 'photos' })).toEqual(['S3_ACCESS_KEY_ID: missing beside S3_BUCKET', 'S3_SECRET_ACCESS_KEY: missing beside S3_BUCKET']);
+    expect(faultsOf({ DATABASE_URL, S3_ENDPOINT: 'https://store.example' })).toEqual(['S3_ENDPOINT: set without S3_BUCKET']);
+    expect(faultsOf({ DATABASE_URL, ...S3, S3_BUCKET: 'No Bucket', S3_PATH_STYLE: 'yes' })).toEqual([expect.stringMatching(/^S3_BUCKET: /), expect.stringMatching(/^S3_PATH_STYLE: /)]);
+    const strangers = { DATABASE_URL, NODE_ENV: 'production', PUBLIC_ORIGIN: 'https://a.example', MAIL_URL: 'smtps://mail.example', MAIL_FROM: 'post@a.example', ...S3 };
+    expect(faultsOf({ ...strangers, S3_ENDPOINT: 'http://store.example' })).toEqual([expect.stringMatching(/^S3_ENDPOINT: must be https/)]);
+    expect(faultsOf({ ...strangers, S3_ENDPOINT: 'http://127.0.0.1:9000' })).toEqual([]);
+  });
 
   test('write an IPv6 host into the origin as addresses do', () => {
     expect(parseConfig({ DATABASE_URL, HOST: '::1' }).publicOrigin).toBe('http://[::1]:5080');

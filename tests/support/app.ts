@@ -5,10 +5,12 @@ import { afterEach, beforeEach, expect, vi } from 'vitest';
 import type { MockInstance } from 'vitest';
 import { parseDay } from '#domain/dates/day.ts';
 import type { Day } from '#domain/dates/day.ts';
+import { createPhotoMeans } from '#server/files/photo-means.ts';
 import { createApp } from '#server/http/app.ts';
 import type { AppDependencies } from '#server/http/app.ts';
 import { keptLog } from './log.ts';
 import type { KeptLog } from './log.ts';
+import { TEST_PHOTOS } from './test-photos.ts';
 
 /** The day it is in tests, unless they say otherwise. */
 const TODAY = '2026-12-01';
@@ -20,7 +22,7 @@ export type TestApp = {
   readonly log: KeptLog;
 };
 
-type Settings = Partial<AppDependencies['config']> & Partial<Pick<AppDependencies, 'clock' | 'jobs'>>;
+type Settings = Partial<AppDependencies['config']> & Partial<Pick<AppDependencies, 'clock' | 'jobs' | 'photos'>>;
 
 /** An app for each test, over that test's own connection. A request that fails on our side, or a word on the console, fails the test. */
 export function useApp(database: { readonly knex: Knex }, settings: Settings = {}): TestApp {
@@ -59,13 +61,14 @@ export function useApp(database: { readonly knex: Knex }, settings: Settings = {
 }
 
 /** The app as the server makes it, with a day that stands still and a log that is kept. */
-export function appOver(knex: Knex, log: KeptLog, { clock, jobs, ...config }: Settings = {}): Express {
+export function appOver(knex: Knex, log: KeptLog, { clock, jobs, photos, ...config }: Settings = {}): Express {
   return createApp({
     knex,
     config: { environment: 'test', publicOrigin: 'http://127.0.0.1:5080', trustProxy: [], clientDirectory: '/nonexistent', localPostDirectory: undefined, ...config },
     logger: log.logger,
     clock: clock ?? (() => dayOf(TODAY)),
     jobs: jobs ?? { isAlive: () => true },
+    photos: photos ?? createPhotoMeans({ directory: TEST_PHOTOS, bucket: undefined }),
   });
 }
 

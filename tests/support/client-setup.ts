@@ -7,12 +7,13 @@ class StillObserver implements ResizeObserver {
   unobserve(): void {}
   disconnect(): void {}
 }
-vi.stubGlobal('ResizeObserver', StillObserver);
 
 /** What a test writes to the console unasked is a fault of the code it tests. */
 const complaints: unknown[][] = [];
 
 beforeEach(() => {
+  // Anew each time: a test that takes its own stand-ins away takes this one too.
+  vi.stubGlobal('ResizeObserver', StillObserver);
   complaints.length = 0;
   for (const level of ['error', 'warn'] as const) vi.spyOn(console, level).mockImplementation((...said: unknown[]) => complaints.push(said));
 });

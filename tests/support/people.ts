@@ -58,8 +58,10 @@ export type TestPeople = {
 
 /**
  * A database of the test file's own, which requests commit to, and an app over it. A request that fails on our side fails the test.
+ *
+ * @param settings of the app, asked for before each test
  */
-export function usePeople(): TestPeople {
+export function usePeople(settings: () => AppSettings = () => ({})): TestPeople {
   let knex: Knex | undefined;
   let name: string | undefined;
   let passwordHash = '';
@@ -73,7 +75,7 @@ export function usePeople(): TestPeople {
   });
   beforeEach(() => {
     const log = keptLog();
-    current = { app: appOver(inHand(knex), log, { trustProxy: ['loopback'] }), log };
+    current = { app: appOver(inHand(knex), log, { trustProxy: ['loopback'], ...settings() }), log };
   });
   afterEach(() => {
     expect(inHand(current).log.takeErrors()).toEqual([]);
@@ -96,7 +98,7 @@ export function usePeople(): TestPeople {
     get log() {
       return inHand(current).log;
     },
-    anotherApp: (settings) => appOver(inHand(knex), inHand(current).log, { trustProxy: ['loopback'], ...settings }),
+    anotherApp: (others) => appOver(inHand(knex), inHand(current).log, { trustProxy: ['loopback'], ...others }),
     browser: ({ app, network, userAgent } = {}) => {
       browsers += 1;
       const agent = supertest.agent(app ?? inHand(current).app).set('Origin', ORIGIN);

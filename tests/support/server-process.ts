@@ -1,6 +1,7 @@
 import { spawn } from 'node:child_process';
 import { once } from 'node:events';
 import { fileURLToPath } from 'node:url';
+import { TEST_PHOTOS } from './test-photos.ts';
 
 const PROJECT = fileURLToPath(new URL('../..', import.meta.url));
 
@@ -21,7 +22,7 @@ export type ServerProcess = {
 export async function startServerProcess(settings: Readonly<Record<string, string>>): Promise<ServerProcess> {
   const child = spawn(process.execPath, ['--import', 'tsx', 'server/main.ts'], {
     cwd: PROJECT,
-    env: { PATH: process.env['PATH'], HOST: '127.0.0.1', PORT: '0', ...settings },
+    env: { PATH: process.env['PATH'], HOST: '127.0.0.1', PORT: '0', PHOTO_DIR: TEST_PHOTOS, ...settings },
     stdio: ['ignore', 'pipe', 'pipe'],
   });
   const ended = once(child, 'exit').then(([code]: unknown[]) => (typeof code === 'number' ? code : null));

@@ -2,6 +2,8 @@ import type { Request, RequestHandler, Response } from 'express';
 import type { Knex } from 'knex';
 import { VISITOR } from '#server/policies/viewer.ts';
 import type { MemberViewer } from '#server/policies/viewer.ts';
+import { onlyOnce } from '#server/services/only-once.ts';
+import type { KeyedRequest } from '#server/services/only-once.ts';
 import { deviceOf } from '#server/services/people/device.ts';
 import type { RequestContext } from '#server/services/people/request-context.ts';
 import { hashOfSecret } from '#server/services/people/secrets.ts';
@@ -16,6 +18,8 @@ export type Identity = {
   readonly context: RequestContext;
   /** Writes the session cookie, where the request changed it; for an answer that says it succeeded. */
   readonly writeCookie: (response: Response) => void;
+  /** Does what a keyed request asks for, once. */
+  readonly once: (keyed: KeyedRequest, work: () => Promise<unknown>) => Promise<unknown>;
 };
 
 const identities = new WeakMap<Request, Identity>();
@@ -34,7 +38,7 @@ export function identify(knex: Knex, cookie: SessionCookie): RequestHandler {
       network: networkOf(request.ip),
       session,
     };
-    identities.set(request, { context, writeCookie });
+    identities.set(request, { context, writeCookie, once: (keyed, work) => onlyOnce(keyed, work, knex) });
     next();
   };
 }
@@ -57,6 +61,7 @@ function nobody(request: Request): Identity {
       session: { start: refuse, renew: refuse, end: refuse },
     },
     writeCookie: () => undefined,
+    once: refuse,
   };
 }
 

@@ -19,6 +19,8 @@ import { mountModels } from './models.ts';
 import { mountModeration } from './moderation.ts';
 import { mountNotices } from './notices.ts';
 import { mountPartTypes } from './part-types.ts';
+import { mountParts } from './parts.ts';
+import { mountPhotos } from './photos.ts';
 import { mountPost } from './post.ts';
 import { mountReworks } from './reworks.ts';
 import { mountSecondFactors } from './second-factors.ts';
@@ -36,7 +38,9 @@ export function mountApi(dependencies: ApiDependencies): Router {
   mountCastings(router, dependencies);
   mountCiphers(router, dependencies);
   mountCipherWorkbench(router, dependencies);
+  mountParts(router, dependencies);
   mountMarks(router, dependencies);
+  mountPhotos(router, dependencies);
   mountReworks(router, dependencies);
   mountSerialRanges(router, dependencies);
   mountSources(router, dependencies);

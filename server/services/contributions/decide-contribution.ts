@@ -20,8 +20,9 @@ import { checkProposal } from './check-proposal.ts';
 import { contributionPage } from './contribution-page.ts';
 import type { ContributionPageOnRecord } from './contribution-page.ts';
 import { asLabel } from '#server/services/facts/as-label.ts';
+import { requireRevision } from '#server/services/require-revision.ts';
 import { requireNotDecided } from './decided-meanwhile.ts';
-import { holdContribution, requireRevision } from './hold-contribution.ts';
+import { holdContribution } from './hold-contribution.ts';
 import { writeContributionAudit } from './write-contribution-audit.ts';
 
 export type NewDecision = {

@@ -26,10 +26,3 @@ export async function holdOwnContribution(viewer: Viewer, id: string, trx: Knex.
   if (viewer.kind !== 'member' || contribution.authorId !== viewer.id) throw new ProblemError('not-allowed', 'Only its author does that.');
   return contribution;
 }
-
-/** @throws ProblemError `conflict` where it was changed since that revision. */
-export function requireRevision(contribution: Contribution, revision: number): void {
-  if (contribution.revision !== revision) {
-    throw new ProblemError('conflict', 'It was changed elsewhere meanwhile. Look at it again first; what you typed is still with you.');
-  }
-}

@@ -6,11 +6,12 @@ import { signedIn } from '#server/policies/viewer.ts';
 import { versionsOf } from '#server/services/facts/fact-versions.ts';
 import type { RequestContext } from '#server/services/people/request-context.ts';
 import { ProblemError } from '#server/services/problem-error.ts';
+import { requireRevision } from '#server/services/require-revision.ts';
 import { withTransaction } from '#server/services/transaction.ts';
 import { contributionPage } from './contribution-page.ts';
 import type { ContributionPageOnRecord } from './contribution-page.ts';
 import { contributionTitle } from './contribution-title.ts';
-import { holdOwnContribution, requireRevision } from './hold-contribution.ts';
+import { holdOwnContribution } from './hold-contribution.ts';
 
 type Save = HandlerInput<typeof saveEndpoint>['body'];
 

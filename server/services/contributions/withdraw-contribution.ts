@@ -2,11 +2,12 @@ import type { Knex } from 'knex';
 import { signedIn } from '#server/policies/viewer.ts';
 import type { RequestContext } from '#server/services/people/request-context.ts';
 import { ProblemError } from '#server/services/problem-error.ts';
+import { requireRevision } from '#server/services/require-revision.ts';
 import { withTransaction } from '#server/services/transaction.ts';
 import { contributionPage } from './contribution-page.ts';
 import type { ContributionPageOnRecord } from './contribution-page.ts';
 import { requireNotDecided } from './decided-meanwhile.ts';
-import { holdOwnContribution, requireRevision } from './hold-contribution.ts';
+import { holdOwnContribution } from './hold-contribution.ts';
 import { writeContributionAudit } from './write-contribution-audit.ts';
 
 /**

@@ -1,51 +1,51 @@
 import type { Knex } from 'knex';
-import { FactName } from '#db/models/fact-name.ts';
-import type { Machine } from '#db/models/machine.ts';
-import type { Maker } from '#db/models/maker.ts';
+import type { CombinedReading } from '#domain/marks/combine-readings.ts';
+import { settleReadings } from '#domain/marks/settle-readings.ts';
+import type { FactName } from '#db/models/fact-name.ts';
 import { Mark } from '#db/models/mark.ts';
-import { PartFitting } from '#db/models/part-fitting.ts';
-import { ProblemError } from '#server/services/problem-error.ts';
-import { isBeingWorkedOut } from '#server/services/reworks/is-being-worked-out.ts';
+import { Reading } from '#db/models/reading.ts';
+import { markRights, requireMayReadMark } from '#server/policies/marks.ts';
+import type { MarkRights } from '#server/policies/marks.ts';
+import type { Viewer } from '#server/policies/viewer.ts';
+import { MARK_GRAPH, namesOf, viewOf } from './load-marks.ts';
+import type { MarkInView } from './load-marks.ts';
+import { madeReading } from './settle-mark.ts';
 
-/** Marks that would give away a serial its owner doesn’t show. */
-const TELLS_SERIAL: ReadonlySet<Mark['kind']> = new Set(['serial', 'plate']);
-
-export type MarkOnRecord = {
-  readonly mark: Mark;
-  readonly maker: Maker | null;
-  readonly casting: FactName | null;
-  /** `null`: on none, or on one that is not public. */
-  readonly machine: Machine | null;
+export type MarkOnRecord = MarkInView & {
+  /** Newest first, each with whether a later one by the same reader stands in its place; none for whom they are hidden from. */
+  readonly readings: readonly { readonly reading: Reading; readonly replaced: boolean }[];
+  /** How the reading in force was worked out; `null` where no reading is independent, and for whom it is hidden from. */
+  readonly inForce: CombinedReading | null;
   readonly cipher: FactName | null;
-  readonly isWorkedOut: boolean;
+  readonly can: MarkRights;
 };
 
 /**
- * A mark, as anybody may see it.
+ * A mark, as far as the viewer may see it.
  *
- * @throws ProblemError `not-found` for one that is not there, stands on something that is not public, or tells a serial that is not shown.
+ * @throws ProblemError `not-found` for one that is not there, stands on something that is not for the viewer to see, or tells a serial that is not
+ *   shown.
  */
-export async function readMark(id: string, knex: Knex): Promise<MarkOnRecord> {
-  const mark = await Mark.query(knex).findById(id).withGraphFetched('[part.[maker, casting.[maker]], machine.model, readings.reader, decoding]');
-  const { part, machine } = mark ?? {};
-  const isPublic = part?.visibility === 'public' || machine?.visibility === 'public';
-  const isKept = machine?.serialShown === false && mark !== undefined && TELLS_SERIAL.has(mark.kind);
-  if (mark === undefined || !isPublic || isKept) throw new ProblemError('not-found', 'No mark that is public is at this address.');
-
-  const fitting = part ? await PartFitting.query(knex).where({ partId: part.id }).whereRaw('upper_inf(fitted)').first().withGraphFetched('machine.model') : undefined;
-  const foundIn = machine ?? fitting?.machine ?? null;
-  const maker = part?.casting?.maker ?? part?.maker ?? null;
-  const makers = [maker?.id, part?.casting?.pouredById].flatMap((one) => one ?? []);
+export async function readMark(viewer: Viewer, id: string, knex: Knex): Promise<MarkOnRecord> {
+  const mark = requireMayReadMark(viewer, await Mark.query(knex).findById(id).withGraphFetched(MARK_GRAPH));
+  const inView = (await viewOf([mark], viewer, knex))(mark);
+  const readings = inView.isHidden ? [] : await Reading.query(knex).where({ markId: id }).modify('newestFirst').withGraphFetched('reader');
+  const place = { hasPhoto: (mark.photos ?? []).length > 0, isPublic: mark.part?.visibility === 'public' };
+  const ciphers = await namesOf([mark.decoding?.cipherId], knex);
   return {
-    mark,
-    maker,
-    casting: await nameOf(part?.castingId, knex),
-    machine: foundIn?.visibility === 'public' ? foundIn : null,
-    cipher: await nameOf(mark.decoding?.cipherId, knex),
-    isWorkedOut: mark.kind !== 'date-code' || !(await isBeingWorkedOut({ makers, models: foundIn ? [foundIn.modelId] : [] }, knex)),
+    ...inView,
+    readings: withReplaced(readings),
+    inForce: settleReadings(readings.map(madeReading), place).inForce,
+    cipher: ciphers.get(mark.decoding?.cipherId ?? '') ?? null,
+    can: markRights(viewer, mark),
   };
 }
 
-async function nameOf(factId: string | null | undefined, knex: Knex): Promise<FactName | null> {
-  return factId ? ((await FactName.query(knex).findOne({ id: factId })) ?? null) : null;
+/** Newest first. One made after looking at others’ takes no independent one’s place. */
+function withReplaced(readings: readonly Reading[]): MarkOnRecord['readings'] {
+  return readings.map((reading, place) => {
+    const standsInItsPlace = (later: Reading): boolean =>
+      later.readerId === reading.readerId && later.takenBackAt === null && (later.independent || !reading.independent);
+    return { reading, replaced: reading.takenBackAt === null && readings.slice(0, place).some(standsInItsPlace) };
+  });
 }

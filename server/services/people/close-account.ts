@@ -11,6 +11,7 @@ import { queueMail } from '#server/mail/queue-mail.ts';
 import type { MemberViewer } from '#server/policies/viewer.ts';
 import { writeAudit } from '#server/services/audit/write-audit.ts';
 import { eraseNoticesOf } from '#server/services/notices/erase-notices-of.ts';
+import { letGoOfParts } from '#server/services/parts/let-go-of-parts.ts';
 import { ProblemError } from '#server/services/problem-error.ts';
 import { withTransaction } from '#server/services/transaction.ts';
 import { accountKey, forgiveAttempts } from './attempts.ts';
@@ -21,8 +22,8 @@ import { lockAccount, requireOwnPassword } from './require-own-password.ts';
 import { endSessionsOf } from './sessions.ts';
 
 /**
- * Closes an account. What the member entered or put forward stays, under "a former member"; name, address, password, second factors,
- * sessions, drafts, notices and scopes go. The trail keeps the id, which leads to nobody any more.
+ * Closes an account. What the member entered or put forward stays, under "a former member", and so do public parts and what others have read;
+ * name, address, password, second factors, sessions, drafts, private parts, notices and scopes go. The trail keeps the id, which leads to nobody any more.
  *
  * @throws ProblemError `not-allowed` at `password`; `conflict` for the last registrar.
  */
@@ -45,6 +46,7 @@ export async function closeAccount(viewer: MemberViewer, password: string, conte
       await MemberScope.query(trx).delete().where({ memberId: viewer.id });
       // What was put forward is the register's to decide; what was not is nobody's any more.
       await Contribution.query(trx).delete().where({ authorId: viewer.id, state: 'drafted' });
+      await letGoOfParts(viewer.id, trx);
       await eraseNoticesOf(viewer.id, trx);
       await eraseMailOf(viewer.id, trx);
       for (const kind of ['password', 'second-factor', 'letter'] as const) await forgiveAttempts(kind, accountKey(holder.email), trx);

@@ -7,10 +7,14 @@ import { FactVersion } from '#db/models/fact-version.ts';
 import { Flag } from '#db/models/flag.ts';
 import { MailMessage } from '#db/models/mail-message.ts';
 import type { Maker } from '#db/models/maker.ts';
+import { Mark } from '#db/models/mark.ts';
 import { Member } from '#db/models/member.ts';
 import { NoticeChoice } from '#db/models/notice-choice.ts';
 import { Notice } from '#db/models/notice.ts';
+import { Part } from '#db/models/part.ts';
 import { Passkey } from '#db/models/passkey.ts';
+import { Photo } from '#db/models/photo.ts';
+import { Reading } from '#db/models/reading.ts';
 import type { Session } from '#db/models/session.ts';
 import { Source } from '#db/models/source.ts';
 import { requireRecentProof } from '#server/policies/identity.ts';
@@ -36,6 +40,13 @@ export type MineOnRecord = {
   readonly contributions: readonly Contribution[];
   readonly comments: readonly ContributionComment[];
   readonly flags: readonly Flag[];
+  /** With their photos; what others read of their marks is the others'. */
+  readonly parts: readonly Part[];
+  /** Of those parts, with their photos. */
+  readonly marks: readonly Mark[];
+  readonly readings: readonly Reading[];
+  /** With what their bytes are. */
+  readonly photos: readonly Photo[];
   /** What they did and what was done to them. */
   readonly acts: readonly AuditRow[];
 };
@@ -69,6 +80,10 @@ export async function exportMine(viewer: MemberViewer, { requestId }: RequestCon
         contributions: await Contribution.query(trx).where({ authorId: memberId }).orderBy(['startedAt', 'id']),
         comments: await ContributionComment.query(trx).where({ authorId: memberId }).orderBy(['at', 'id']),
         flags: await Flag.query(trx).where({ byId: memberId }).orderBy(['at', 'id']),
+        parts: await Part.query(trx).where({ holderId: memberId }).orderBy(['recordedAt', 'id']).withGraphFetched('[partType, maker, foundModel, photos]'),
+        marks: await Mark.query(trx).whereIn('partId', Part.query(trx).where({ holderId: memberId }).select('id')).orderBy('id').withGraphFetched('photos'),
+        readings: await Reading.query(trx).where({ readerId: memberId }).orderBy(['madeAt', 'id']),
+        photos: await Photo.query(trx).where({ ownerId: memberId }).orderBy(['addedAt', 'id']).withGraphFetched('picture'),
         acts: await AuditRow.query(trx).where({ actorId: memberId }).orWhere({ subjectKind: 'member', subjectId: memberId }).orderBy(['at', 'id']),
       };
     },

@@ -61,6 +61,11 @@ const Fitting = z.object({
 });
 export type Fitting = z.infer<typeof Fitting>;
 
+/** Parts and what is on them, without where they were looked for. */
+export type Stretch = Omit<PartsAtHand, 'last'>;
+
+const PART_COLUMNS = ['parts.id', 'parts.makerId', 'parts.partTypeId', 'parts.castingId'];
+
 type Scope = Pick<Rework, 'makers' | 'models'>;
 
 /**
@@ -99,9 +104,17 @@ export async function partsAfter({ reached, ...scope }: Scope & Pick<Rework, 're
   if (reached !== null) void next.where('id', '>', reached);
   const last = z.array(z.object({ id: z.string() })).parse(await next).at(-1)?.id ?? null;
   if (last === null) return { last, parts: [], numbers: [], dates: [], fittings: [] };
-  const query = partsResting(scope, knex).where('parts.id', '<=', last).orderBy('parts.id').select('parts.id', 'parts.makerId', 'parts.partTypeId', 'parts.castingId');
+  const query = partsResting(scope, knex).where('parts.id', '<=', last).orderBy('parts.id').select(PART_COLUMNS);
   if (reached !== null) void query.where('parts.id', '>', reached);
-  const parts = z.array(PartAtHand).parse(await query);
+  return { last, ...(await withWhatIsOnThem(z.array(PartAtHand).parse(await query), knex)) };
+}
+
+/** One part with its numbers, dates and where it is fitted; nothing where it is not on record. */
+export async function partAtHand(id: string, knex: Knex): Promise<Stretch> {
+  return withWhatIsOnThem(z.array(PartAtHand).parse(await knex('parts').where({ id }).select(PART_COLUMNS)), knex);
+}
+
+async function withWhatIsOnThem(parts: readonly PartAtHand[], knex: Knex): Promise<Stretch> {
   const ids = parts.map(({ id }) => id);
   const numbers = await knex('marks').where({ kind: 'casting-number' }).whereNotNull('reading').whereIn('partId', ids).orderBy('id').select('partId', 'reading');
   const dates = await knex('marks')
@@ -121,5 +134,5 @@ export async function partsAfter({ reached, ...scope }: Scope & Pick<Rework, 're
       'machines.serialAsStamped', 'positions.lead', { workedOut: 'part_fits.fittingId' },
       'verdict', 'late', 'inLead', 'early', 'markId', 'built', 'typeVerdict',
     );
-  return { last, parts, numbers: z.array(NumberMark).parse(numbers), dates: z.array(DateMark).parse(dates), fittings: z.array(Fitting).parse(fittings) };
+  return { parts, numbers: z.array(NumberMark).parse(numbers), dates: z.array(DateMark).parse(dates), fittings: z.array(Fitting).parse(fittings) };
 }

@@ -5,10 +5,11 @@ import { today } from '#server/services/today.ts';
 import { withTransaction } from '#server/services/transaction.ts';
 import { finishRework } from './finish-rework.ts';
 import { countResting, partsAfter } from './parts-at-hand.ts';
+import { takeTurn } from './take-turn.ts';
 import { whatChanged } from './what-changed.ts';
 import { workOutParts } from './work-out-parts.ts';
 import type { WorkOutMeans } from './work-out-parts.ts';
-import { writeChanges } from './write-changes.ts';
+import { noteMachines, writeChanges } from './write-changes.ts';
 
 /** Parts gone through in one transaction, those that don’t rest on the fact counted, unless a test says otherwise. */
 const PARTS_AT_ONCE = 2_000;
@@ -48,7 +49,7 @@ async function workOutLot(reworkId: string, partsAtOnce: number, means: WorkOutM
   for (const limit of ['lock_timeout', 'statement_timeout', 'idle_in_transaction_session_timeout']) {
     await trx.raw('select set_config(?, ?, true)', [limit, PATIENCE]);
   }
-  await trx.raw(`select pg_advisory_xact_lock(hashtextextended('reworks', 0))`);
+  await takeTurn('reworks', trx);
   const rework = await Rework.query(trx).findById(reworkId).forUpdate();
   // One that is gone went with a database that was made anew.
   if (rework === undefined || rework.state === 'done') return true;
@@ -60,7 +61,8 @@ async function workOutLot(reworkId: string, partsAtOnce: number, means: WorkOutM
     return true;
   }
   const changes = whatChanged(atHand, await workOutParts(atHand, means, trx));
-  await writeChanges(reworkId, changes, trx);
+  await writeChanges(changes, trx);
+  await noteMachines(reworkId, changes, trx);
   await rework.$query(trx).patch({
     state: 'running',
     reached: atHand.last,

@@ -1,4 +1,4 @@
-import type { DateMark, Fitting, PartsAtHand } from './parts-at-hand.ts';
+import type { DateMark, Fitting, Stretch } from './parts-at-hand.ts';
 import type { Decoded, Fitted, WorkedOut } from './work-out-parts.ts';
 
 export type MachineChange = { readonly machineId: string; readonly castings: number; readonly dates: number; readonly fits: number };
@@ -18,7 +18,7 @@ export type Changes = {
 };
 
 /** Compares what was worked out with the record. What is worked out for the first time is written and changes nothing anybody was told. */
-export function whatChanged({ parts, dates, fittings }: PartsAtHand, worked: WorkedOut): Changes {
+export function whatChanged({ parts, dates, fittings }: Stretch, worked: WorkedOut): Changes {
   const machineOf = new Map(fittings.map(({ partId, machineId }) => [partId, machineId]));
   const machines = new Map<string, MachineChange>();
   const count = (partId: string, what: 'castings' | 'dates' | 'fits'): void => {

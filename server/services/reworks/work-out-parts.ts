@@ -19,7 +19,7 @@ import { placingMachines } from '#server/services/marks/place-machines.ts';
 import type { MachinePlace } from '#server/services/marks/place-machines.ts';
 import { storedCiphers } from '#server/services/stored-ciphers.ts';
 import type { StoredCipher } from '#server/services/stored-ciphers.ts';
-import type { DateMark, Fitting, PartAtHand, PartsAtHand } from './parts-at-hand.ts';
+import type { DateMark, Fitting, PartAtHand, Stretch } from './parts-at-hand.ts';
 
 export type Decoded = Pick<MarkDecoding, 'status' | 'cipherId' | 'cipherVersion' | 'total' | 'candidates'>;
 export type Fitted = Pick<PartFit, 'verdict' | 'late' | 'inLead' | 'early' | 'markId' | 'built' | 'typeVerdict'>;
@@ -56,7 +56,7 @@ const UNDATED = { verdict: null, late: null, inLead: null, early: null, markId: 
  * A mark is decoded under every cipher in force that its part may carry; the one under which the reading is likeliest counts. A part goes
  * by its cast mark with the fewest dates, as what was stamped later says nothing of the pouring.
  */
-export async function workOutParts({ parts, numbers, dates, fittings }: PartsAtHand, means: WorkOutMeans, knex: Knex): Promise<WorkedOut> {
+export async function workOutParts({ parts, numbers, dates, fittings }: Stretch, means: WorkOutMeans, knex: Knex): Promise<WorkedOut> {
   const catalogue = await castingsFor(parts, knex);
   const numbersOf = groupedBy(numbers, ({ partId }) => partId);
   const datesOf = groupedBy(dates, ({ partId }) => partId);

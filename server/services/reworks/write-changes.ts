@@ -3,7 +3,7 @@ import { writeRange } from '#db/ranges.ts';
 import type { Changes } from './what-changed.ts';
 
 /** Writes what came out otherwise, each table in one statement however many rows. */
-export async function writeChanges(reworkId: string, { castings, decodings, fits, undecoded, machines }: Changes, trx: Knex.Transaction): Promise<void> {
+export async function writeChanges({ castings, decodings, fits, undecoded }: Changes, trx: Knex.Transaction): Promise<void> {
   if (castings.length > 0) {
     await trx.raw(
       `update parts set casting_id = now.casting_id
@@ -47,16 +47,19 @@ export async function writeChanges(reworkId: string, { castings, decodings, fits
       ],
     );
   }
-  if (machines.length > 0) {
-    await trx.raw(
-      `insert into rework_machines (rework_id, machine_id, castings, dates, fits)
-       select ?, machine_id, castings, dates, fits
-         from jsonb_to_recordset(?::jsonb) as now (machine_id uuid, castings integer, dates integer, fits integer)
-       on conflict (rework_id, machine_id) do update set
-         castings = rework_machines.castings + excluded.castings,
-         dates = rework_machines.dates + excluded.dates,
-         fits = rework_machines.fits + excluded.fits`,
-      [reworkId, JSON.stringify(machines.map(({ machineId, castings: named, dates, fits: fitted }) => ({ machine_id: machineId, castings: named, dates, fits: fitted })))],
-    );
-  }
+}
+
+/** Notes on which machines something came out otherwise, to tell their owners once the rework is over. */
+export async function noteMachines(reworkId: string, { machines }: Changes, trx: Knex.Transaction): Promise<void> {
+  if (machines.length === 0) return;
+  await trx.raw(
+    `insert into rework_machines (rework_id, machine_id, castings, dates, fits)
+     select ?, machine_id, castings, dates, fits
+       from jsonb_to_recordset(?::jsonb) as now (machine_id uuid, castings integer, dates integer, fits integer)
+     on conflict (rework_id, machine_id) do update set
+       castings = rework_machines.castings + excluded.castings,
+       dates = rework_machines.dates + excluded.dates,
+       fits = rework_machines.fits + excluded.fits`,
+    [reworkId, JSON.stringify(machines.map(({ machineId, castings, dates, fits }) => ({ machine_id: machineId, castings, dates, fits })))],
+  );
 }

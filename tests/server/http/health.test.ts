@@ -13,7 +13,7 @@ describe('health', () => {
   });
 
   test('it is ready while the database is reachable and up to date', async () => {
-    await app.agent.get('/readyz').expect(200, { status: 'ready', database: 'reachable', migrations: 'current', queue: 'alive' });
+    await app.agent.get('/readyz').expect(200, { status: 'ready', database: 'reachable', migrations: 'current', queue: 'alive', photos: 'writable' });
   });
 
   test('it is not ready while a migration has yet to run, and says in the log which', async () => {

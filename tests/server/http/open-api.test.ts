@@ -68,6 +68,18 @@ describe('the description of the interface', () => {
     expect(schema).toMatchObject({ type: 'object', required: ['mark'], additionalProperties: false });
   });
 
+  test('says of a form with a file which field it goes in', () => {
+    const content = z
+      .looseObject({ requestBody: z.looseObject({ content: z.record(z.string(), z.looseObject({ schema: z.looseObject({}) })) }) })
+      .parse(operations.find(({ operation }) => operation.operationId === 'uploadPhoto')?.operation).requestBody.content;
+    expect(Object.keys(content)).toEqual(['multipart/form-data']);
+    expect(content['multipart/form-data']?.schema).toMatchObject({
+      required: ['photo'],
+      properties: { photo: { contentMediaType: 'application/octet-stream' }, keepDate: { enum: ['true', 'false'] } },
+      additionalProperties: false,
+    });
+  });
+
   test('lets an answer gain fields', () => {
     const answers = JSON.stringify(operations.map(({ operation }) => operation.responses));
     expect(answers).not.toContain('"additionalProperties":false');

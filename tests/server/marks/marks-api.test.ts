@@ -48,8 +48,9 @@ describe('a mark', () => {
   test('tells its readings and, once they are worked out, its dates', async () => {
     const { knex } = database;
     const { cipher, casting, mark } = await county(knex);
-    const [reader, other] = await Member.query(knex).orderBy('id').limit(2);
+    const [reader, other, third] = await Member.query(knex).orderBy('id').limit(3);
     await addReading(mark, 'b-bo-cb', other?.id ?? '', knex, '2030-01-01T00:00:00Z');
+    await addReading(mark, 'B BO CB', third?.id ?? '', knex, '2030-01-02T00:00:00Z');
     expect(await pageOf(mark)).toMatchObject({ workingOut: true, dates: null, reading: 'B-BO-CB' });
 
     await workOff(knex);
@@ -60,6 +61,7 @@ describe('a mark', () => {
       technique: 'cast',
       reading: 'B-BO-CB',
       readings: [
+        { text: 'B-BO-CB', by: third?.displayName },
         { text: 'B-BO-CB', by: other?.displayName },
         { text: 'BBOCB', by: reader?.displayName },
       ],

@@ -11,6 +11,7 @@ import { Part } from '#db/models/part.ts';
 import type { Position } from '#db/models/position.ts';
 import { Rework } from '#db/models/rework.ts';
 import { createCipherCache } from '#server/services/cipher-cache.ts';
+import { settleMark } from '#server/services/marks/settle-mark.ts';
 import { runRework } from '#server/services/reworks/run-rework.ts';
 import { FEN, HES, TEN } from '#tests/domain/ciphers/worked-ciphers.ts';
 import { useDatabase } from '#tests/support/database.ts';
@@ -79,6 +80,7 @@ describe('a date mark', () => {
     expect(await MarkDecoding.query(knex).findById(nobodys.id)).toBeUndefined();
     expect(await MarkDecoding.query(knex).findById(mark.id)).toBeDefined();
     await knex('readings').where({ markId: mark.id }).delete();
+    await settleMark(mark.id, knex);
     expect((await workOut({ makers: [makerId] }, knex)).changed).toBe(1);
     expect(await MarkDecoding.query(knex).findById(mark.id)).toBeUndefined();
   });

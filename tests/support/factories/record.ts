@@ -1,3 +1,4 @@
+import { randomBytes } from 'node:crypto';
 import type { Knex } from 'knex';
 import { v7 as uuidV7 } from 'uuid';
 import { parseReading, writeReading } from '#domain/marks/reading.ts';
@@ -8,17 +9,21 @@ import { Casting } from '#db/models/casting.ts';
 import { Fitment } from '#db/models/fitment.ts';
 import { MachineModel } from '#db/models/machine-model.ts';
 import { Machine } from '#db/models/machine.ts';
+import { MarkPhoto } from '#db/models/mark-photo.ts';
 import { Mark } from '#db/models/mark.ts';
 import { Member } from '#db/models/member.ts';
 import { PartFitting } from '#db/models/part-fitting.ts';
 import { PartType } from '#db/models/part-type.ts';
 import { Part } from '#db/models/part.ts';
+import { Photo } from '#db/models/photo.ts';
+import { Picture } from '#db/models/picture.ts';
 import { Position } from '#db/models/position.ts';
 import { Reading } from '#db/models/reading.ts';
 import { SerialRange } from '#db/models/serial-range.ts';
 import { SeriesAccount } from '#db/models/series-account.ts';
 import { Series } from '#db/models/series.ts';
 import { Source } from '#db/models/source.ts';
+import { settleMark } from '#server/services/marks/settle-mark.ts';
 import { addFact, addMaker } from './catalogue.ts';
 
 /** A small county for tests: models with serials and positions, castings, machines, and parts with marks on them. */
@@ -127,10 +132,32 @@ export async function addMark(part: Part, kind: Mark['kind'], text: string, trx:
   return Mark.query(trx).findById(mark.id).throwIfNotFound();
 }
 
-export async function addReading(mark: Mark, text: string, readerId: string, trx: Knex, madeAt?: string): Promise<Reading> {
+/** One more reading of a mark, which is settled with it. */
+export async function addReading(mark: Pick<Mark, 'id'>, text: string, readerId: string, trx: Knex, madeAt?: string): Promise<Reading> {
   const reading = parseReading(text);
   if (!reading.ok) throw new Error(reading.fault.message);
-  return Reading.query(trx).insert({ id: uuidV7(), markId: mark.id, readerId, text: writeReading(reading.value), ...(madeAt === undefined ? {} : { madeAt }) });
+  return trx.transaction(async (inner) => {
+    const made = await Reading.query(inner).insert({ id: uuidV7(), markId: mark.id, readerId, text: writeReading(reading.value), ...(madeAt === undefined ? {} : { madeAt }) });
+    await settleMark(mark.id, inner);
+    return made;
+  });
+}
+
+/** A photo of a member's whose renditions are still to be made, of a picture nobody else has. */
+export async function addPhoto(ownerId: string, trx: Knex): Promise<Photo> {
+  const picture = await Picture.query(trx).insert({
+    id: uuidV7(), digest: randomBytes(32), storeKey: randomBytes(16).toString('hex'), type: 'jpeg', bytes: '1000', width: 640, height: 480, state: 'waiting', failure: null,
+  });
+  return Photo.query(trx).insertAndFetch({ id: uuidV7(), ownerId, pictureId: picture.id, address: randomBytes(16).toString('hex'), name: 'gear case.jpg', takenOn: null });
+}
+
+/** Puts a photo of its holder's on a mark, which is settled with it. */
+export async function photograph(mark: Pick<Mark, 'id' | 'partId'>, trx: Knex): Promise<Photo> {
+  const part = await Part.query(trx).findById(String(mark.partId)).throwIfNotFound();
+  const photo = await addPhoto(part.holderId, trx);
+  await MarkPhoto.query(trx).insert({ markId: mark.id, photoId: photo.id, ordinal: 0 });
+  await trx.transaction((inner) => settleMark(mark.id, inner));
+  return photo;
 }
 
 async function someMember(trx: Knex): Promise<string> {
