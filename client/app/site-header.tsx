@@ -6,6 +6,7 @@ import { Logo } from '../ui/logo.tsx';
 import { ViewerMenu } from './viewer-menu.tsx';
 
 const CATALOGUE_AREAS = ['/catalogue', '/makers', '/models', '/part-types', '/castings', '/ciphers', '/serial-ranges', '/sources', '/marks', '/contributors'] as const;
+const BENCH_AREAS = ['/bench', '/parts'] as const;
 const CONTRIBUTE_AREAS = ['/contribute', '/contributions'] as const;
 const QUEUE_AREAS = ['/moderation'] as const;
 const REGISTRAR_AREAS = ['/registrar'] as const;
@@ -18,13 +19,14 @@ export function SiteHeader({ pathname }: { readonly pathname: string }) {
         <Logo /> Pourbook
       </Link>
       <nav aria-label="Pourbook" className="no-print max-wide:order-last max-wide:w-full">
-        <ul className="flex gap-1 text-[15px] max-wide:-ml-1 min-[390px]:gap-2 min-[390px]:text-base roomy:gap-5">
+        <ul className="flex flex-wrap gap-x-1 text-[15px] max-wide:-ml-1 min-[390px]:gap-x-2 min-[390px]:text-base roomy:gap-x-5">
           <li>
             <NavLink to={paths.decode()} className="nav-link">
               Decode
             </NavLink>
           </li>
           <Area to={paths.catalogue()} isCurrent={isIn(CATALOGUE_AREAS, pathname)} name="Catalogue" />
+          <Area to={paths.bench()} isCurrent={isIn(BENCH_AREAS, pathname)} name="Bench" />
           <Area to={paths.contribute()} isCurrent={isIn(CONTRIBUTE_AREAS, pathname)} name="Contribute" />
           {viewer?.can.decideContributions && <Area to={paths.queue()} isCurrent={isIn(QUEUE_AREAS, pathname)} name="Queue" />}
           {viewer?.can.seeMembers && <Area to={paths.registrarMembers()} isCurrent={isIn(REGISTRAR_AREAS, pathname)} name="Registrar" />}

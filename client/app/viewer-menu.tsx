@@ -2,7 +2,7 @@ import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { Link, NavLink, useLocation, useNavigate } from 'react-router-dom';
 import { signOut } from '#contract/accounts.ts';
 import type { Me } from '#contract/people.ts';
-import { changeViewer, useOtherTabs } from '../features/people/change-viewer.ts';
+import { leaveViewer, useOtherTabs } from '../features/people/change-viewer.ts';
 import { me } from '../features/people/people-queries.ts';
 import { call } from '../lib/call.ts';
 import { paths } from '../lib/paths.ts';
@@ -37,7 +37,7 @@ function Signed({ viewer }: { readonly viewer: Me }) {
     mutationFn: () => call(signOut, {}),
     onSuccess: () => {
       void navigate(paths.signIn());
-      changeViewer(queryClient, null);
+      leaveViewer(queryClient);
     },
   });
   return (

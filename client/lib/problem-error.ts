@@ -60,6 +60,11 @@ export function problemOfKind(kind: ProblemKind): ProblemError {
   return new ProblemError({ kind, status, detail: `${title}.`, faults: [], requestId: null, retryAfter: null });
 }
 
+/** Nothing stands at the address, or what it names can't be the name of anything. */
+export function isNothingThere(error: unknown): boolean {
+  return error instanceof ProblemError && (error.kind === 'not-found' || error.kind === 'invalid');
+}
+
 function kindOfStatus(status: number): ProblemKind {
   return PROBLEM_KINDS.find((kind) => PROBLEMS[kind].status === status) ?? (status >= 502 ? 'unavailable' : 'internal');
 }

@@ -42,6 +42,8 @@ function sayProblem({ kind, message, requestId, retryAfter, faults }: ProblemErr
     case 'identity-not-confirmed':
     case 'second-factor-owed':
       return { title: PROBLEMS[kind].title, advice: message, again: false, requestId };
+    case 'no-room':
+      return { title: PROBLEMS[kind].title, advice: message, again: true, requestId };
     case 'conflict':
       return { title: 'It changed in the meantime', advice: 'Load it again to see what it is now. Nothing of yours was written.', again: true, requestId };
     case 'internal':

@@ -56,7 +56,8 @@ export function requestOf(
   return maker === undefined ? null : { ...common, makerId: maker.id };
 }
 
-function resultInHand({ results }: DecodeAnswer): DecodeResult | null {
+/** The result an answer is about: its only one, or the only one that can make the mark. */
+export function resultInHand({ results }: DecodeAnswer): DecodeResult | null {
   const [first, ...others] = results;
   if (first === undefined || others.length === 0) return first ?? null;
   const able = results.filter(({ candidates }) => candidates.length > 0);

@@ -7,7 +7,7 @@ import type { ProblemError } from '../../lib/problem-error.ts';
 import { useContractForm } from '../../lib/use-contract-form.ts';
 import { Button } from '../../ui/button.tsx';
 import { ActTrouble } from './act-trouble.tsx';
-import { changeViewer } from './change-viewer.ts';
+import { leaveViewer } from './change-viewer.ts';
 import { FormTrouble } from './form-trouble.tsx';
 import type { Explanation } from './form-trouble.tsx';
 import { PasswordField } from './password-field.tsx';
@@ -22,7 +22,7 @@ export function CloseForm() {
     send: (body) => call(closeAccount, { body }),
     onDone: () => {
       void navigate(paths.accountClosed(), { replace: true });
-      changeViewer(queryClient, null);
+      leaveViewer(queryClient);
     },
   });
   return (

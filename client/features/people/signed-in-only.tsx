@@ -10,11 +10,18 @@ import { PartingLine } from '../../ui/parting-line.tsx';
 import { Skeleton } from '../../ui/skeleton.tsx';
 import { me } from './people-queries.ts';
 
+type Props = {
+  readonly title: string;
+  /** What stands here for members, told to a visitor. */
+  readonly about?: ReactNode;
+  readonly children: (viewer: Me) => ReactNode;
+};
+
 /** A page for members: a visitor, or somebody whose session ended meanwhile, is offered to sign in and comes back to it. */
-export function SignedInOnly({ title, children }: { readonly title: string; readonly children: (viewer: Me) => ReactNode }) {
+export function SignedInOnly({ title, about, children }: Props) {
   const { data: viewer, error, refetch } = useQuery(me());
   if (viewer) return children(viewer);
-  if (viewer === null) return <SignInFirst />;
+  if (viewer === null) return about === undefined ? <SignInFirst /> : <SignInFirst title={title} about={about} />;
   return (
     <>
       <PageTitle title={title}>{title}</PageTitle>
@@ -26,16 +33,18 @@ export function SignedInOnly({ title, children }: { readonly title: string; read
   );
 }
 
-function SignInFirst() {
+const NOT_SIGNED_IN = <p>You are not signed in, or no longer. Sign in and you come back to this page.</p>;
+
+function SignInFirst({ title = 'Sign in first', about = NOT_SIGNED_IN }: { readonly title?: string; readonly about?: ReactNode }) {
   const { pathname, search, hash } = useLocation();
   return (
     <>
-      <PageTitle title="Sign in first" below="This page is a member’s own.">
-        Sign in first
+      <PageTitle title={title} below="This page is a member’s own.">
+        {title}
       </PageTitle>
       <PartingLine />
       <div className="max-w-measure space-y-6 pt-8">
-        <p>You are not signed in, or no longer. Sign in and you come back to this page.</p>
+        {about}
         <div className="flex flex-wrap gap-3">
           <ButtonLink weight="primary" to={paths.signIn(`${pathname}${search}${hash}`)}>
             Sign in

@@ -37,6 +37,17 @@ export const ACT_WORDS: Readonly<Record<AuditAct, string>> = {
   'fact.flagged': 'flagged a fact',
   'flag.settled': 'settled a flag',
   'series.reading-marked': 'marked an account as the register’s reading',
+  'photo.added': 'added a photo',
+  'photo.removed': 'removed a photo',
+  'part.recorded': 'put a part on record',
+  'part.changed': 'changed a part',
+  'part.removed': 'took a part off the record',
+  'mark.recorded': 'put a mark on record',
+  'mark.changed': 'changed a mark',
+  'mark.placed': 'said where a mark stands on a photo',
+  'mark.removed': 'took a mark off the record',
+  'reading.made': 'read a mark',
+  'reading.taken-back': 'took a reading back',
 };
 
 /** What was written down beside an act, part by part: `reason: wrong password`. */

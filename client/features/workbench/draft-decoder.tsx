@@ -2,11 +2,11 @@ import { useDeferredValue, useMemo, useState } from 'react';
 import type { CompiledCipher } from '#domain/ciphers/compiled-cipher.ts';
 import type { Day } from '#domain/dates/day.ts';
 import { parseReading } from '#domain/marks/reading.ts';
-import { capital } from '../../lib/say-number.ts';
 import { MarkEntry } from '../../ui/mark-entry.tsx';
 import { AnswerLines } from '../decode/answer-lines.tsx';
 import { CandidateTable } from '../decode/candidate-table.tsx';
 import { DIVISIONS_SHOWN, divisionsOf } from '../decode/divisions.ts';
+import { faultOfMark } from '../decode/fault-of-mark.ts';
 import { ThrownOut } from '../decode/thrown-out.tsx';
 import { limitsAround } from './day-strip.ts';
 import { decodeUnderDraft } from './draft-decoding.ts';
@@ -28,7 +28,7 @@ export function DraftDecoder({ compiled, today, day, stale }: Props) {
         label="A mark"
         value={mark}
         onChange={setMark}
-        fault={faultOf(mark)}
+        fault={faultOfMark(mark)}
         divisions={isStale || decoded === null ? [] : divisionsOf(decoded.result.candidates).slice(0, DIVISIONS_SHOWN)}
         lit={isStale ? null : (decoded?.result.settle[0]?.position ?? null)}
       />
@@ -42,11 +42,4 @@ export function DraftDecoder({ compiled, today, day, stale }: Props) {
       )}
     </>
   );
-}
-
-/** What is wrong with the mark as typed; nothing is with a bare plate or a bracket being filled. */
-function faultOf(mark: string): string | null {
-  const parsed = parseReading(mark);
-  if (parsed.ok || parsed.fault.code === 'empty' || parsed.fault.code === 'open-bracket' || parsed.fault.code === 'empty-bracket') return null;
-  return capital(parsed.fault.message);
 }

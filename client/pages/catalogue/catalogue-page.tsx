@@ -36,6 +36,7 @@ const SHELVES = [
   { path: paths.partTypes(), name: 'Part types', holds: 'what a casting is, when no number is left on it' },
   { path: paths.ciphers(), name: 'Ciphers', holds: 'how each maker wrote its dates, worked through' },
   { path: paths.serialRanges(), name: 'Serial ranges', holds: 'numbers and dates, rival accounts side by side' },
+  { path: paths.marks(), name: 'Record of marks', holds: 'what was read on parts, from which photo, and how sure it is' },
   { path: paths.sources(), name: 'Sources', holds: 'the books, drawings, plates and sightings it all rests on' },
 ] as const;
 

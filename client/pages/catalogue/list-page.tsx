@@ -28,7 +28,7 @@ export type ListState<Row> = {
 
 type Props<Row> = {
   readonly title: string;
-  /** Where the list belongs; the catalogue unless another place is said. */
+  /** Where the list belongs; the catalogue unless another place is said, null where it is a place of its own. */
   readonly above?: ReactNode;
   /** One and many of what is listed: `casting`, `castings`. */
   readonly noun: readonly [one: string, many: string];
@@ -47,6 +47,10 @@ type Props<Row> = {
   readonly empty: string;
   /** What to try when nothing matches. */
   readonly advice?: ReactNode;
+  /** What can be done here besides looking, above the filters. */
+  readonly deeds?: ReactNode;
+  /** Offered where nothing is on record at all. */
+  readonly firstStep?: ReactNode;
 };
 
 /** What helps in the catalogue, where marks are looked for. */
@@ -71,17 +75,20 @@ export function ListPage<Row>({
   table,
   empty,
   advice = LOOK_AGAIN,
+  deeds,
+  firstStep,
 }: Props<Row>) {
   const results = useFocusOnNewPage(params.get('after'));
   return (
     <>
-      <PageTitle title={title} above={above} below={below}>
+      <PageTitle title={title} below={below} {...(above === null ? {} : { above })}>
         {title}
       </PageTitle>
       <PartingLine />
       <div className="pt-6">
         <PageGrid>
           <Block margin={<div className="space-y-3 text-[15px] leading-snug text-slag">{aside}</div>}>
+            {deeds !== undefined && <div className="no-print mb-6 flex flex-wrap items-center gap-3">{deeds}</div>}
             <search className="no-print mb-4 block">
               <form onSubmit={(event) => event.preventDefault()} className="grid grid-cols-2 gap-x-4 wide:grid-cols-3">
                 {filters}
@@ -93,7 +100,7 @@ export function ListPage<Row>({
               )}
             </search>
             <section ref={results} tabIndex={-1} aria-label={title} className="scroll-mt-4 outline-none">
-              <Results {...{ noun, state, params, narrowed, waiting, table, empty, advice }} />
+              <Results {...{ noun, state, params, narrowed, waiting, table, empty, advice, firstStep }} />
             </section>
           </Block>
         </PageGrid>
@@ -105,9 +112,10 @@ export function ListPage<Row>({
 type ResultsProps<Row> = Pick<Props<Row>, 'noun' | 'state' | 'params' | 'narrowed' | 'table' | 'empty'> & {
   readonly advice: ReactNode;
   readonly waiting: string | null;
+  readonly firstStep: ReactNode;
 };
 
-function Results<Row>({ noun, state, params, narrowed, waiting, table, empty, advice }: ResultsProps<Row>) {
+function Results<Row>({ noun, state, params, narrowed, waiting, table, empty, advice, firstStep }: ResultsProps<Row>) {
   const { data, error, isPlaceholderData, refetch } = state;
   const [one, many] = noun;
   if (waiting !== null) return <EmptyState title="Not asked yet">{waiting}</EmptyState>;
@@ -120,7 +128,9 @@ function Results<Row>({ noun, state, params, narrowed, waiting, table, empty, ad
         <Live>{`No ${one} matches`}</Live>
       </EmptyState>
     ) : (
-      <EmptyState title={`No ${many} on record yet`}>{empty}</EmptyState>
+      <EmptyState title={`No ${many} on record yet`} action={firstStep}>
+        {empty}
+      </EmptyState>
     );
   }
   const said = data === undefined || isPlaceholderData ? '' : sayCount(data, noun, narrowed);

@@ -2,7 +2,6 @@ import { useQuery } from '@tanstack/react-query';
 import type { QueryClient } from '@tanstack/react-query';
 import { Link } from 'react-router-dom';
 import type { LoaderFunction } from 'react-router-dom';
-import { parseReading } from '#domain/marks/reading.ts';
 import { AnswerLines } from '../../features/decode/answer-lines.tsx';
 import { CandidateTable } from '../../features/decode/candidate-table.tsx';
 import { CastingChoice } from '../../features/decode/casting-choice.tsx';
@@ -12,6 +11,7 @@ import { useCipherNotes } from '../../features/decode/cipher-notes.tsx';
 import { castingInHand, makersToChoose, modelsToChoose } from '../../features/decode/decode-queries.ts';
 import { DIVISIONS_SHOWN, divisionsOf } from '../../features/decode/divisions.ts';
 import { EXAMPLE, exampleAddress } from '../../features/decode/example.ts';
+import { faultOfMark } from '../../features/decode/fault-of-mark.ts';
 import { MachineForm } from '../../features/decode/machine-form.tsx';
 import { machineNotes } from '../../features/decode/machine-notes.tsx';
 import { ruleOfDecode, sayRule } from '../../features/decode/rule-of-decode.ts';
@@ -21,7 +21,6 @@ import { useDecoding } from '../../features/decode/use-decoding.ts';
 import { useFit } from '../../features/decode/use-fit.ts';
 import { VerdictPanel } from '../../features/decode/verdict-panel.tsx';
 import { useDraft } from '../../lib/use-draft.ts';
-import { capital } from '../../lib/say-number.ts';
 import { Caution } from '../../ui/caution.tsx';
 import { CopyAddress } from '../../ui/copy-address.tsx';
 import { EmptyState } from '../../ui/empty-state.tsx';
@@ -70,14 +69,14 @@ export function Component() {
               label="The mark on the casting"
               value={mark}
               onChange={setMark}
-              fault={faultOf(mark)}
+              fault={faultOfMark(mark)}
               divisions={stale || inHand === null ? [] : divisionsOf(inHand.candidates).slice(0, DIVISIONS_SHOWN)}
               lit={stale ? null : (inHand?.settle[0]?.position ?? null)}
             />
             <CipherChoice state={state} change={change} />
             {state.mark === '' && mark === '' && <FirstStep />}
             {decoded.error !== null && <FailureNote error={decoded.error} onAgain={decoded.again} />}
-            {state.mark !== '' && answer === null && decoded.error === null && faultOf(mark) === null && <Skeleton lines={4} label="Decoding" />}
+            {state.mark !== '' && answer === null && decoded.error === null && faultOfMark(mark) === null && <Skeleton lines={4} label="Decoding" />}
             {answer !== null && <AnswerLines answer={answer} inHand={inHand} stale={stale} tried={state.maker === null ? 'all' : 'one maker'} />}
             {answer !== null && inHand === null && <CipherMatches answer={answer} change={change} stale={stale} />}
             {inHand !== null && <CandidateTable result={inHand} fit={held.fit} serial={state.serial} stale={stale} />}
@@ -103,12 +102,6 @@ export function Component() {
   );
 }
 
-/** What is wrong with the mark as typed, for saying so; nothing is wrong with a bare plate or a bracket being filled. */
-function faultOf(mark: string): string | null {
-  const parsed = parseReading(mark);
-  if (parsed.ok || parsed.fault.code === 'empty' || parsed.fault.code === 'open-bracket' || parsed.fault.code === 'empty-bracket') return null;
-  return capital(parsed.fault.message);
-}
 
 function sayMissing(mark: string, answered: boolean): string | null {
   if (mark === '') return 'Type the mark above to hold it against this machine.';

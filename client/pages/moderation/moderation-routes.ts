@@ -3,12 +3,11 @@ import type { RouteObject } from 'react-router-dom';
 import { lazyPage } from '../../lib/lazy-page.ts';
 import type { PageModule } from '../../lib/lazy-page.ts';
 
-/** What moderators see, each fact’s history and each mark: the page at each address, below the frame. */
+/** What moderators see, and each fact’s history: the page at each address, below the frame. */
 const PAGES: Readonly<Record<string, () => Promise<PageModule>>> = {
   '/moderation': () => import('./queue-page.tsx'),
   '/moderation/reworks': () => import('./reworks-page.tsx'),
   '/facts/:id/history': () => import('./fact-history-page.tsx'),
-  '/marks/:id': () => import('./mark-page.tsx'),
 };
 
 export function moderationRoutes(queryClient: QueryClient): RouteObject[] {

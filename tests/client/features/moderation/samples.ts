@@ -1,6 +1,5 @@
 import type { FactRef, Person } from '#contract/contributions.ts';
 import type { FactHistory } from '#contract/facts.ts';
-import type { MarkPage } from '#contract/marks.ts';
 import type { QueueItem, Rework } from '#contract/moderation.ts';
 import type { Me } from '#contract/people.ts';
 
@@ -97,31 +96,6 @@ export function history(over: Partial<FactHistory> = {}): FactHistory {
     sources: [{ id: id(60), slug: 'drawing-2210', title: 'Works drawing 2210' }],
     can: { edit: false, bringBack: false, retire: false, flag: false },
     steps: [step(2, { inForce: true, decidedBy: UNA, contributionId: id(30) }), step(1)],
-    ...over,
-  };
-}
-
-export function mark(over: Partial<MarkPage> = {}): MarkPage {
-  return {
-    id: id(70),
-    kind: 'date-code',
-    technique: 'cast',
-    reading: 'B[OD]-BO-CB',
-    readings: [{ text: 'B[OD]-BO-CB', by: 'Harrow Lane', at: '2026-03-01T10:00:00Z' }],
-    maker: { slug: 'brackwater-tractor-works', name: 'Brackwater Tractor Works' },
-    casting: { id: id(21), kind: 'casting', slug: 'brackwater-b4406', title: 'B4406, first pattern' },
-    machine: { model: { slug: 'brackwater-30-crawler', name: '30 Crawler' }, serial: '3C 12••' },
-    dates: {
-      status: 'several',
-      cipher: CIPHER,
-      cipherVersion: 2,
-      candidates: [
-        { from: '1941-01-13', to: '1941-01-13', share: 0.5 },
-        { from: '1941-11-03', to: '1941-11-03', share: 0.5 },
-      ],
-      total: 2,
-    },
-    workingOut: false,
     ...over,
   };
 }

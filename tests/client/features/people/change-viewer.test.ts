@@ -1,7 +1,7 @@
 import { QueryClient } from '@tanstack/react-query';
-import { expect, it } from 'vitest';
+import { beforeEach, expect, it } from 'vitest';
 import type { Me } from '#contract/people.ts';
-import { changeViewer, noticeSignedOut } from '#client/features/people/change-viewer.ts';
+import { changeViewer, leaveViewer, noticeSignedOut } from '#client/features/people/change-viewer.ts';
 import { me } from '#client/features/people/people-queries.ts';
 import { problemOfKind } from '#client/lib/problem-error.ts';
 
@@ -24,6 +24,8 @@ function cacheOf(viewer: Me | null): QueryClient {
   cache.setQueryData(['registrar', 'members'], { items: ['more private'] });
   return cache;
 }
+const TYPED = 'pourbook:typed:reading';
+beforeEach(() => sessionStorage.setItem(TYPED, '"LL?"'));
 const keysIn = (cache: QueryClient) => cache.getQueryCache().getAll().map(({ queryKey }) => queryKey[0]);
 
 it.each([null, WREN])('forgets what was shown to whoever was here before', (next) => {
@@ -48,4 +50,13 @@ it('takes no other failure for it, nor that answer where nobody was signed in', 
   const visiting = cacheOf(null);
   noticeSignedOut(problemOfKind('not-signed-in'), visiting);
   expect(keysIn(visiting)).toHaveLength(3);
+});
+
+it('drops what was typed when somebody signs out, and keeps it where the session ended by itself', () => {
+  noticeSignedOut(problemOfKind('not-signed-in'), cacheOf(WREN));
+  expect(sessionStorage.getItem(TYPED)).not.toBeNull();
+  const cache = cacheOf(WREN);
+  leaveViewer(cache);
+  expect(sessionStorage.getItem(TYPED)).toBeNull();
+  expect(cache.getQueryData(me().queryKey)).toBeNull();
 });
