@@ -1,3 +1,4 @@
+import { setMaxListeners } from 'node:events';
 import { setTimeout as wait } from 'node:timers/promises';
 import PgBoss from 'pg-boss';
 import type { Logger } from 'pino';
@@ -67,6 +68,8 @@ export function startJobRunner({ url, handlings, logger, pollEvery = POLL }: Run
   boss.on('error', (error) => logger.warn({ err: error }, 'the queue met an error'));
   const stopping = new AbortController();
   const cutting = new AbortController();
+  // Every lane listens to both, and more than ten listeners are taken for a leak.
+  setMaxListeners(0, stopping.signal, cutting.signal);
 
   const workOff = async (handling: JobHandling): Promise<void> => {
     const { name } = handling.definition;
