@@ -33,7 +33,7 @@ export const AREAS = [
     name: 'client',
     at: ['client'],
     may: ['domain', 'contract', 'client'],
-    packages: ['@fontsource', '@simplewebauthn/browser', '@tanstack/react-query', '@use-gesture/react', 'react', 'react-dom', 'react-dropzone', 'react-router-dom', 'twgl.js', 'zod'],
+    packages: ['@fontsource', '@simplewebauthn/browser', '@tanstack/react-query', '@use-gesture/react', 'react', 'react-dom', 'react-dropzone', 'react-router-dom', 'twgl.js', 'uuid', 'zod'],
     node: false,
     why: 'pages know of the server only what #domain and #contract say; the rest must not reach a browser',
   },

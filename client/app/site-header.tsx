@@ -7,6 +7,8 @@ import { ViewerMenu } from './viewer-menu.tsx';
 
 const CATALOGUE_AREAS = ['/catalogue', '/makers', '/models', '/part-types', '/castings', '/ciphers', '/serial-ranges', '/sources', '/marks', '/contributors'] as const;
 const BENCH_AREAS = ['/bench', '/parts'] as const;
+/** A mark is read at the bench, whosever it is. */
+const READING = /^\/marks\/[^/]+\/read$/;
 const CONTRIBUTE_AREAS = ['/contribute', '/contributions'] as const;
 const QUEUE_AREAS = ['/moderation'] as const;
 const REGISTRAR_AREAS = ['/registrar'] as const;
@@ -25,8 +27,8 @@ export function SiteHeader({ pathname }: { readonly pathname: string }) {
               Decode
             </NavLink>
           </li>
-          <Area to={paths.catalogue()} isCurrent={isIn(CATALOGUE_AREAS, pathname)} name="Catalogue" />
-          <Area to={paths.bench()} isCurrent={isIn(BENCH_AREAS, pathname)} name="Bench" />
+          <Area to={paths.catalogue()} isCurrent={isIn(CATALOGUE_AREAS, pathname) && !READING.test(pathname)} name="Catalogue" />
+          <Area to={paths.bench()} isCurrent={isIn(BENCH_AREAS, pathname) || READING.test(pathname)} name="Bench" />
           <Area to={paths.contribute()} isCurrent={isIn(CONTRIBUTE_AREAS, pathname)} name="Contribute" />
           {viewer?.can.decideContributions && <Area to={paths.queue()} isCurrent={isIn(QUEUE_AREAS, pathname)} name="Queue" />}
           {viewer?.can.seeMembers && <Area to={paths.registrarMembers()} isCurrent={isIn(REGISTRAR_AREAS, pathname)} name="Registrar" />}

@@ -11,7 +11,11 @@ export type CallOptions<E extends Endpoint> = {
   readonly [Part in keyof CallInput<E> as Record<never, never> extends CallInput<E>[Part] ? never : Part]: CallInput<E>[Part];
 } & {
   readonly [Part in keyof CallInput<E> as Record<never, never> extends CallInput<E>[Part] ? Part : never]?: Optionally<CallInput<E>[Part]>;
-} & { readonly signal?: AbortSignal };
+} & {
+  readonly signal?: AbortSignal;
+  /** Under which a creating request is done once, however often it is sent; a UUID. */
+  readonly key?: string;
+};
 
 /**
  * Calls an endpoint and parses what comes back.
@@ -19,19 +23,21 @@ export type CallOptions<E extends Endpoint> = {
  * a call that was given up through `signal` rejects with the signal's own reason.
  */
 export async function call<E extends Endpoint>(endpoint: E, options: CallOptions<E>): Promise<AnswerOf<E>>;
-export async function call(endpoint: Endpoint, options: Partial<CallInput<Endpoint>> & { signal?: AbortSignal }): Promise<unknown> {
+export async function call(endpoint: Endpoint, options: LooseOptions): Promise<unknown> {
   const response = await send(endpoint, options);
   if (!response.ok) throw await problemFrom(response);
   return endpoint.answer.parse(await response.json());
 }
 
-async function send(endpoint: Endpoint, options: Partial<CallInput<Endpoint>> & { signal?: AbortSignal }): Promise<Response> {
+type LooseOptions = Partial<CallInput<Endpoint>> & { readonly signal?: AbortSignal; readonly key?: string };
+
+async function send(endpoint: Endpoint, options: LooseOptions): Promise<Response> {
   const timeout = AbortSignal.timeout(PATIENCE_MS);
   const hasBody = options.body !== undefined;
   try {
     return await fetch(addressOf(endpoint.path, options.params, options.query), {
       method: endpoint.method,
-      headers: { Accept: 'application/json', ...(hasBody ? { 'Content-Type': 'application/json' } : {}) },
+      headers: { Accept: 'application/json', ...(hasBody ? { 'Content-Type': 'application/json' } : {}), ...(options.key === undefined ? {} : { 'Idempotency-Key': options.key }) },
       ...(hasBody ? { body: JSON.stringify(options.body) } : {}),
       credentials: 'same-origin',
       signal: options.signal === undefined ? timeout : AbortSignal.any([options.signal, timeout]),

@@ -3,6 +3,7 @@ import { Nothing } from '#contract/endpoint.ts';
 import type { Endpoint } from '#contract/endpoint.ts';
 import { Problem, PROBLEMS } from '#contract/problem.ts';
 import type { ProblemKind } from '#contract/problem.ts';
+import { KEY_HEADER } from './keyed.ts';
 
 type Json = null | boolean | number | string | readonly Json[] | { readonly [name: string]: Json };
 type JsonObject = { readonly [name: string]: Json };
@@ -38,7 +39,7 @@ export function describeApi(endpoints: Readonly<Record<string, Endpoint>>): ApiD
     (paths[path] ??= {})[endpoint.method.toLowerCase()] = {
       operationId,
       summary: endpoint.summary,
-      parameters: [...parametersIn('path', endpoint.params, schemas), ...parametersIn('query', endpoint.query, schemas)],
+      parameters: [...parametersIn('path', endpoint.params, schemas), ...parametersIn('query', endpoint.query, schemas), ...keyOf(endpoint)],
       ...(takesBody(endpoint) ? { requestBody: { required: true, content: contentOf(endpoint, schemas) } } : {}),
       responses: {
         [String(endpoint.status)]: {
@@ -66,6 +67,13 @@ export function describeApi(endpoints: Readonly<Record<string, Endpoint>>): ApiD
       ),
     },
   };
+}
+
+/** Uploads need none: the bytes themselves say that it is the same photo. */
+function keyOf({ status, file }: Endpoint): Json[] {
+  if (status !== 201 || file !== undefined) return [];
+  const description = 'A UUID, new for each thing to be made: sent again with the same request, it is answered as before and nothing is made twice';
+  return [{ name: KEY_HEADER, in: 'header', required: false, description, schema: { type: 'string', format: 'uuid' } }];
 }
 
 function takesBody(endpoint: Endpoint): boolean {

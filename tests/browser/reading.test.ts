@@ -1,6 +1,8 @@
 import sharp from 'sharp';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, inject, it } from 'vitest';
+import { drawPhoto } from '#fixtures/photos/draw-photo.ts';
+import { HANDS } from '#fixtures/photos/hand.ts';
 import { expectOnlyRefusals, signInOn, useSitePeople } from '#tests/support/browser-people.ts';
 import { axeFindings, openBrowser, overflows, SCREENS, visit } from '#tests/support/browser.ts';
 import type { Visit } from '#tests/support/browser.ts';
@@ -149,6 +151,33 @@ describe('the reading screen', () => {
     expect(await page.getByRole('button', { name: 'Larger' }).isVisible()).toBe(true);
     expect(await plate(page).inputValue()).toBe('LLKCB');
     await page.getByText('You have read it before.').waitFor();
+  });
+
+  it('goes from a photo as the demo draws them, sent from the bench, to the date that stands on it', async () => {
+    const { page, complaints } = here;
+    const line = { name: 'date', text: 'LLKCB', height: 200, relief: 'raised', missing: [] } as const;
+    const { jpeg } = await drawPhoto({
+      name: 'block', seed: 41, width: 1000, height: 700, lines: [line], hand: HANDS[0]!, surface: 'rusty', paint: 0,
+      light: { azimuth: 225, elevation: 20 }, turn: 8, blur: 0.6, glare: false, wear: 0.2,
+    });
+    await asMember(page, 'Barn Bramble');
+    await page.goto('/bench/new');
+    await page.getByLabel('Photos from this device').setInputFiles([{ name: 'barn.jpg', mimeType: 'image/jpeg', buffer: jpeg }]);
+    await page.locator('img[alt="Photo 1"][src*="/thumb-"]').waitFor();
+    await page.getByRole('combobox', { name: 'Maker' }).fill('Brackwater');
+    await page.getByRole('option', { name: 'Brackwater Tractor Works' }).click();
+    await press(page, 'Put it on record');
+    await page.getByRole('link', { name: 'Add a mark' }).click();
+    await press(page, 'Put it on record and read it');
+    await page.waitForURL(/\/marks\/[^/]+\/read$/);
+    await page.getByRole('img', { name: /^Photo, / }).waitFor();
+    await press(page, 'Relief');
+    await plate(page).fill(line.text);
+    await page.getByText('25 Feb 1941').first().waitFor();
+    await press(page, 'Save this reading');
+    await page.getByRole('heading', { name: 'What it can mean' }).waitFor();
+    await page.getByRole('rowheader', { name: '25 Feb 1941' }).waitFor();
+    expect(faultsOf(complaints)).toEqual([]);
   });
 
   it('keeps from a second reader what the first read, on a phone, until theirs is saved', async () => {

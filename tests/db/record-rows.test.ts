@@ -2,7 +2,16 @@ import { DatabaseError } from 'pg';
 import { v7 as uuidV7 } from 'uuid';
 import { describe, expect, test } from 'vitest';
 import { FIT_VERDICTS } from '#domain/fit/fit.ts';
-import { EVIDENCE_STRENGTHS, MARK_KINDS, MARK_TECHNIQUES, VISIBILITIES } from '#domain/vocabulary.ts';
+import {
+  EVIDENCE_STRENGTHS,
+  MARK_KINDS,
+  MARK_TECHNIQUES,
+  PHOTO_STATES,
+  PHOTO_TYPES,
+  RENDITIONS,
+  RENDITION_TYPES,
+  VISIBILITIES,
+} from '#domain/vocabulary.ts';
 import { Mark } from '#db/models/mark.ts';
 import { MarkDecoding } from '#db/models/mark-decoding.ts';
 import { PartFitting } from '#db/models/part-fitting.ts';
@@ -109,6 +118,10 @@ describe('the words of the columns are those of the vocabulary', () => {
     ['visibility_check', VISIBILITIES],
     ['part_fits_verdict_check', FIT_VERDICTS],
     ['reworks_state_check', REWORK_STATES],
+    ['pictures_type_check', PHOTO_TYPES],
+    ['pictures_state_check', PHOTO_STATES],
+    ['picture_files_rendition_check', RENDITIONS],
+    ['picture_files_type_check', RENDITION_TYPES],
   ])('%s', async (constraint, words) => {
     const { rows } = await database.knex.raw<{ rows: { line: string }[] }>('select pg_get_constraintdef(oid) as line from pg_constraint where conname = ?', [constraint]);
     expect([...(rows[0]?.line ?? '').matchAll(/'([^']*)'::text/g)].map(([, word]) => word)).toEqual([...words]);

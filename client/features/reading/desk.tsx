@@ -11,6 +11,7 @@ import { paths } from '../../lib/paths.ts';
 import { ProblemError } from '../../lib/problem-error.ts';
 import { capital } from '../../lib/say-number.ts';
 import { useSessionDraft } from '../../lib/session-draft.ts';
+import { useRequestKey } from '../../lib/use-request-key.ts';
 import { Button } from '../../ui/button.tsx';
 import { EmptyState } from '../../ui/empty-state.tsx';
 import { MarkEntry } from '../../ui/mark-entry.tsx';
@@ -137,8 +138,9 @@ function useSaving(id: string, drop: () => void) {
   const navigate = useNavigate();
   const queryClient = useQueryClient();
   const [fault, setFault] = useState<string | null>(null);
+  const keyOf = useRequestKey();
   const { mutate, reset, isPending, error } = useMutation({
-    mutationFn: (body: NewReading) => call(makeReading, { params: { id }, body }),
+    mutationFn: (body: NewReading) => call(makeReading, { params: { id }, body, key: keyOf(body) }),
     onSuccess: async (mark) => {
       await queryClient.invalidateQueries({ queryKey: markKeys.all, refetchType: 'none' });
       queryClient.setQueryData(markKeys.page(id), mark);

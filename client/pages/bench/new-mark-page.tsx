@@ -20,6 +20,7 @@ import { call } from '../../lib/call.ts';
 import { paths } from '../../lib/paths.ts';
 import { isNothingThere, ProblemError } from '../../lib/problem-error.ts';
 import { useSessionDraft } from '../../lib/session-draft.ts';
+import { useRequestKey } from '../../lib/use-request-key.ts';
 import { Button, ButtonLink } from '../../ui/button.tsx';
 import { ErrorSummary } from '../../ui/error-summary.tsx';
 import type { SummaryFault } from '../../ui/error-summary.tsx';
@@ -64,8 +65,12 @@ function NewMark({ part, viewer }: { readonly part: PartPage; readonly viewer: M
   const { value, change, drop } = useSessionDraft(`new-mark:${id}:${viewer.id}`, begin(part), MarkDraft);
   const [isEarly, setIsEarly] = useState(false);
   const uploads = useUploads((photo) => change((now) => ({ ...now, photoIds: [...withPhoto(now.photoIds, photo.id)] })));
+  const keyOf = useRequestKey();
   const record = useMutation({
-    mutationFn: ({ photoIds, ...nature }: MarkDraft) => call(recordMark, { params: { id }, body: { ...nature, photos: photoIds.map((photoId) => ({ photoId, region: null })), reading: null } }),
+    mutationFn: ({ photoIds, ...nature }: MarkDraft) => {
+      const body = { ...nature, photos: photoIds.map((photoId) => ({ photoId, region: null })), reading: null };
+      return call(recordMark, { params: { id }, body, key: keyOf(body) });
+    },
     onSuccess: async (mark) => {
       queryClient.setQueryData(markPage(mark.id).queryKey, mark);
       void queryClient.invalidateQueries({ queryKey: partKeys.all });

@@ -11,6 +11,7 @@ import { photoKeys } from '../../features/photos/photo-queries.ts';
 import { call } from '../../lib/call.ts';
 import { paths } from '../../lib/paths.ts';
 import { useSessionDraft } from '../../lib/session-draft.ts';
+import { useRequestKey } from '../../lib/use-request-key.ts';
 import { PageTitle } from '../../ui/page-title.tsx';
 import { PartingLine } from '../../ui/parting-line.tsx';
 import { AboutTheBench } from './about-the-bench.tsx';
@@ -27,8 +28,9 @@ function NewPart({ viewer }: { readonly viewer: Me }) {
   const queryClient = useQueryClient();
   const navigate = useNavigate();
   const draft = useSessionDraft(`new-part:${viewer.id}`, NEW_PART, PartDraft);
+  const keyOf = useRequestKey();
   const act = useMutation({
-    mutationFn: (body: z.output<typeof recordPart.body>) => call(recordPart, { body }),
+    mutationFn: (body: z.output<typeof recordPart.body>) => call(recordPart, { body, key: keyOf(body) }),
     onSuccess: async (part) => {
       queryClient.setQueryData(partPage(part.id).queryKey, part);
       void queryClient.invalidateQueries({ queryKey: partKeys.allMine });

@@ -1,11 +1,9 @@
 import { useQuery } from '@tanstack/react-query';
 import { useParams } from 'react-router-dom';
-import { startContribution } from '#contract/contributions.ts';
 import { NotFoundPage } from '../../app/error-page.tsx';
 import { BeginDraft } from '../../features/contributions/begin-draft.tsx';
 import { historyOfFact } from '../../features/contributions/contributions-queries.ts';
 import { SignedInOnly } from '../../features/people/signed-in-only.tsx';
-import { call } from '../../lib/call.ts';
 import { paths } from '../../lib/paths.ts';
 import { ProblemError } from '../../lib/problem-error.ts';
 import { ButtonLink } from '../../ui/button.tsx';
@@ -35,5 +33,5 @@ function ChangeOf({ id }: { readonly id: string }) {
       </div>
     );
   }
-  return <BeginDraft title={`A change to ${fact.title}`} begin={() => call(startContribution, { body: { kind: fact.kind, subjectId: fact.id, baseVersion: inForce } })} />;
+  return <BeginDraft title={`A change to ${fact.title}`} body={{ kind: fact.kind, subjectId: fact.id, baseVersion: inForce }} />;
 }

@@ -1,13 +1,11 @@
 import { useParams, useSearchParams } from 'react-router-dom';
 import { Id } from '#contract/common.ts';
-import { startContribution } from '#contract/contributions.ts';
 import { formOf, Kind } from '#contract/kinds.ts';
 import type { KindForm } from '#contract/kinds/kind.ts';
 import { NotFoundPage } from '../../app/error-page.tsx';
 import { BeginDraft } from '../../features/contributions/begin-draft.tsx';
 import { blankPayload } from '../../features/contributions/draft-values.ts';
 import { SignedInOnly } from '../../features/people/signed-in-only.tsx';
-import { call } from '../../lib/call.ts';
 
 /** Begins a draft of a kind. What the address names of other facts (`?modelId=…`) stands in it from the start. */
 export function Component() {
@@ -22,7 +20,7 @@ export function Component() {
         <BeginDraft
           key={kind.data}
           title={title}
-          begin={() => call(startContribution, { body: { kind: kind.data, payload: { ...blankPayload(form.fields), ...namedIn(form, params) } } })}
+          body={{ kind: kind.data, payload: { ...blankPayload(form.fields), ...namedIn(form, params) } }}
         />
       )}
     </SignedInOnly>

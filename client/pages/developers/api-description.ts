@@ -7,7 +7,7 @@ const Operation = z.object({
   operationId: z.string(),
   summary: z.string(),
   parameters: z
-    .array(z.object({ name: z.string(), in: z.enum(['path', 'query']), required: z.boolean(), schema: z.json() }))
+    .array(z.object({ name: z.string(), in: z.enum(['path', 'query', 'header']), required: z.boolean(), schema: z.json() }))
     .default([]),
   requestBody: z.object({ content: z.record(z.string(), z.object({ schema: z.json() })) }).optional(),
   responses: z.record(

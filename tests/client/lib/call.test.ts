@@ -34,6 +34,13 @@ describe('call', () => {
     await call(write, { body: { name: 'Sump' } });
     expect(stub.mock.calls[0]?.[1]).toMatchObject({ method: 'POST', body: '{"name":"Sump"}', headers: { 'Content-Type': 'application/json' } });
   });
+  it('names the key under which it is done once, where one is given', async () => {
+    const stub = answering({ name: 'Sump' });
+    await call(write, { body: { name: 'Sump' }, key: '018f0000-0000-7000-8000-000000000000' });
+    await call(write, { body: { name: 'Sump' } });
+    expect(stub.mock.calls[0]?.[1]?.headers).toHaveProperty('Idempotency-Key', '018f0000-0000-7000-8000-000000000000');
+    expect(stub.mock.calls[1]?.[1]?.headers).not.toHaveProperty('Idempotency-Key');
+  });
   it('lets the query be left out where nothing in it is required', async () => {
     const stub = answering({ name: 'Sump' });
     await call(list, {});

@@ -10,7 +10,9 @@ const description = describeApi(ENDPOINTS);
 const Operation = z.looseObject({
   operationId: z.string(),
   summary: z.string().min(1),
-  parameters: z.array(z.strictObject({ name: z.string(), in: z.enum(['path', 'query']), required: z.boolean(), schema: z.looseObject({}) })),
+  parameters: z.array(
+    z.strictObject({ name: z.string(), in: z.enum(['path', 'query', 'header']), required: z.boolean(), description: z.string().optional(), schema: z.looseObject({}) }),
+  ),
   requestBody: z.looseObject({ required: z.literal(true) }).optional(),
   responses: z.record(z.string().regex(/^[2-5]\d\d$/), z.looseObject({})),
 });
@@ -40,6 +42,12 @@ describe('the description of the interface', () => {
       expect(operation.parameters.filter((one) => one.in === 'path').map(({ name }) => name)).toEqual(inPath);
       expect(operation.parameters.filter((one) => one.in === 'path').every(({ required }) => required)).toBe(true);
     }
+  });
+
+  test('says of what makes something, uploads apart, that it may come with a key', () => {
+    const keyed = operations.filter(({ operation }) => operation.parameters.some(({ name, required }) => name === 'Idempotency-Key' && !required));
+    const making = Object.entries(ENDPOINTS).filter(([name, { status }]) => status === 201 && name !== 'uploadPhoto');
+    expect(keyed.map(({ operation }) => operation.operationId).toSorted()).toEqual(making.map(([name]) => name).toSorted());
   });
 
   test('asks for no parameter that has a default', () => {
