@@ -17,15 +17,15 @@ import { holdTestDatabases } from './lib/test-databases.mjs';
  * @typedef {{ passed: number, failed: number, skipped: number }} Totals
  */
 
-/** The steps in the order they are begun, and those that must have passed before. */
+/** The steps in the order they are begun, the longest first so that none is left to run alone, and those that must have passed before. */
 const STEPS = /** @type {const} */ ({
   build: [],
+  server: [],
+  browser: ['build'],
   lint: [],
   types: [],
-  browser: ['build'],
-  domain: [],
   client: [],
-  server: [],
+  domain: [],
   knip: [],
 });
 
