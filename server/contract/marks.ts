@@ -221,7 +221,7 @@ export const makeReading = endpoint({
   method: 'POST',
   path: '/marks/:id/readings',
   status: 201,
-  summary: 'Read a mark. An earlier reading of yours stays on record and no longer counts',
+  summary: 'Read a mark. Earlier readings of yours stay on record; the latest you made without seeing what others read counts',
   params: ById,
   body: z.strictObject({
     text: MarkText,

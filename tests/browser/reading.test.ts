@@ -168,6 +168,7 @@ describe('the reading screen', () => {
     await page.getByRole('option', { name: 'Brackwater Tractor Works' }).click();
     await press(page, 'Put it on record');
     await page.getByRole('link', { name: 'Add a mark' }).click();
+    await page.getByLabel('Kind of mark').selectOption('date-code');
     await press(page, 'Put it on record and read it');
     await page.waitForURL(/\/marks\/[^/]+\/read$/);
     await page.getByRole('img', { name: /^Photo, / }).waitFor();

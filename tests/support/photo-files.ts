@@ -95,6 +95,24 @@ export function jpegOfHeader(file: Buffer, width: number, height: number): Buffe
   return said;
 }
 
+/** A WebP of so many frames of one pixel each (RFC 9649, 2.7): small, and long to decode. */
+export async function animatedWebp(frames: number): Promise<Buffer> {
+  const still = await sharp({ create: { width: 1, height: 1, channels: 3, background: '#777' } }).webp({ lossless: true }).toBuffer();
+  const FIRST_CHUNK = 12;
+  const onePixel = Buffer.alloc(16);
+  const frame = riffChunk('ANMF', Buffer.concat([onePixel, still.subarray(FIRST_CHUNK)]));
+  const animated = Buffer.alloc(10);
+  animated[0] = 0b10;
+  const chunks = [riffChunk('VP8X', animated), riffChunk('ANIM', Buffer.alloc(6)), ...Array.from({ length: frames }, () => frame)];
+  return riffChunk('RIFF', Buffer.concat([Buffer.from('WEBP', 'latin1'), ...chunks]));
+}
+
+function riffChunk(type: string, content: Buffer): Buffer {
+  const length = Buffer.alloc(4);
+  length.writeUInt32LE(content.length);
+  return Buffer.concat([Buffer.from(type, 'latin1'), length, content, Buffer.alloc(content.length % 2)]);
+}
+
 /** Bits turned over here and there in the latter half of a file, where its pixels are. */
 export function bitFlipped(file: Buffer): Buffer {
   const flipped = Buffer.from(file);

@@ -55,10 +55,16 @@ export async function cloneDatabase({ adminUrl, name }: TestRun, template: strin
   return database;
 }
 
-/** Drops databases, cutting off whoever is still connected. */
+/**
+ * Drops databases, cutting off whoever of ours is still connected. Not by force: that is refused while the server's own vacuuming is at work
+ * there, which dropping as such ends by itself.
+ */
 export async function dropDatabases(adminUrl: string, databases: readonly string[]): Promise<void> {
   await withAdmin(adminUrl, async (admin) => {
-    for (const database of databases) await admin.raw('drop database if exists ?? with (force)', [database]);
+    for (const database of databases) {
+      await admin.raw('select pg_terminate_backend(pid) from pg_stat_activity where datname = ? and usename = current_user', [database]);
+      await admin.raw('drop database if exists ??', [database]);
+    }
   });
 }
 

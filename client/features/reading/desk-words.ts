@@ -11,7 +11,7 @@ export function sayStanding({ blind, first, isHolder, mine }: Pick<ReadingDesk, 
       : { title: 'Yours is an independent reading', body: 'You read it without seeing what others read, what it can mean and what part it is on. All is shown once yours is saved.' };
   }
   if (mine !== null) {
-    return { title: 'You have read it before', body: `Your reading of ${sayMoment(mine.at)} stands on the plate. What you save now takes its place; the earlier one stays on record and no longer counts.` };
+    return { title: 'You have read it before', body: `Your reading of ${sayMoment(mine.at)} stands on the plate. What you save now goes on record beside it and counts in its place, unless you have seen meanwhile what others read.` };
   }
   if (first) {
     return { title: 'Yours is the first reading', body: 'Whoever reads it next does so without seeing yours: your reading and the date stay hidden from them until theirs is saved.' };

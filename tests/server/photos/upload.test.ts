@@ -14,7 +14,7 @@ import { createPhotoMeans } from '#server/files/photo-means.ts';
 import { startFakeBucket } from '#tests/support/fake-bucket.ts';
 import { jobsOf } from '#tests/support/jobs.ts';
 import { ORIGIN, usePeople } from '#tests/support/people.ts';
-import { bitFlipped, jpeg, jpegOfHeader, png, pngOfHeader, pngWithChunk, taggedHeic, taggedJpeg, webp } from '#tests/support/photo-files.ts';
+import { animatedWebp, bitFlipped, jpeg, jpegOfHeader, png, pngOfHeader, pngWithChunk, taggedHeic, taggedJpeg, webp } from '#tests/support/photo-files.ts';
 import { photoFolder, rowsOf, upload, usePhotoPeople } from '#tests/support/photos.ts';
 import type { PhotoFolder } from '#tests/support/photos.ts';
 import { problemOf } from '#tests/support/problem.ts';
@@ -237,10 +237,20 @@ describe('a file that is no photo for us', () => {
     });
   });
 
-  test('a text bomb in a PNG takes no memory and does no harm', async () => {
+  test('ten thousand frames of WebP are refused by the header', async () => {
+    const file = await animatedWebp(10_000);
+    await leavingNothing(async () => {
+      expect((await problemOf(upload(browser, file, { name: 'block.webp' }), 422)).detail).toBe('The file is an animation. Send a still picture.');
+    });
+  });
+
+  test.each([
+    ['text', 'zTXt'],
+    ['a colour profile', 'iCCP'],
+  ])('a bomb of %s in a PNG takes no memory and does no harm', async (_what, chunk) => {
     const bomb = Buffer.concat([Buffer.from('Comment\0\0', 'latin1'), deflateSync(Buffer.alloc(100 * 1024 * 1024), { level: 9 })]);
     const before = process.memoryUsage().rss;
-    const { status } = await upload(browser, pngWithChunk(await png(), 'zTXt', bomb), { name: 'block.png' });
+    const { status } = await upload(browser, pngWithChunk(await png(), chunk, bomb), { name: 'block.png' });
     expect([201, 422]).toContain(status);
     expect(process.memoryUsage().rss - before).toBeLessThan(150 * 1024 * 1024);
   });
