@@ -22,10 +22,10 @@ const STEPS = /** @type {const} */ ({
   build: [],
   server: [],
   browser: ['build'],
-  client: [],
-  domain: [],
   lint: [],
   types: [],
+  client: [],
+  domain: [],
   knip: [],
 });
 
@@ -34,11 +34,6 @@ const STEPS = /** @type {const} */ ({
 const NAMES = /** @type {StepName[]} */ (Object.keys(STEPS));
 /** Names of the steps that run tests. */
 const TESTS = /** @type {const} */ (['domain', 'client', 'server', 'browser']);
-
-/** Steps that only read the sources. They go on beside the tests with what these leave of the machine, one at a time. */
-const READERS = /** @type {readonly string[]} */ (['lint', 'types', 'knip']);
-/** What the kernel is asked to put them behind by: tests wait for answers and would give up. */
-const NICENESS = '15';
 
 /** The vitest projects of each. */
 const PROJECTS = /** @type {const} */ ({ domain: 'domain *', client: 'client', server: 'server*', browser: 'browser' });
@@ -119,10 +114,10 @@ async function performChosen(chosen, forVitest, env, runId) {
       const { code, output, fresh } = await buildClient();
       return { passed: code === 0, output, ...(fresh ? { note: 'built before' } : {}) };
     },
-    lint: () => performReader('eslint', ['.', '--max-warnings', '0'], env),
+    lint: () => performTool('eslint', ['.', '--max-warnings', '0'], env),
     // Alone: the compiler's notes on what it has checked are shared by all runs of this clone.
-    types: () => alone(inCache('types.lock'), () => performReader('tsc', ['-b', 'tsconfig.json', '.run/tsconfig.json'], env)),
-    knip: () => performReader('knip', [], env),
+    types: () => alone(inCache('types.lock'), () => performTool('tsc', ['-b', 'tsconfig.json', '.run/tsconfig.json'], env)),
+    knip: () => performTool('knip', [], env),
     domain: () => performTests('domain'),
     client: () => performTests('client'),
     server: () => performTests('server'),
@@ -149,9 +144,7 @@ async function performChosen(chosen, forVitest, env, runId) {
   try {
     const steps = chosen.map((name) => ({ name, after: STEPS[name], perform: work[name] }));
     const lanes = Math.min(2, availableParallelism());
-    const readers = steps.filter(({ name }) => READERS.includes(name));
-    const rest = steps.filter(({ name }) => !READERS.includes(name));
-    const failed = (await Promise.all([performSteps(rest, lanes, tell), performSteps(readers, 1, tell)])).flat();
+    const failed = await performSteps(steps, lanes, tell);
     const minutes = ((performance.now() - began) / 60_000).toFixed(1);
     say(failed.length === 0 ? 'passed' : 'FAILED', `${failed.length === 0 ? 'all steps' : failed.join(', ')} after ${minutes} min`);
     const tests = TESTS.filter((name) => chosen.includes(name));
@@ -182,17 +175,6 @@ function tell(step, { passed, note, output = '' }, seconds) {
  */
 async function performTool(tool, args, env) {
   const { code, output } = await run(packageBin(tool), args, { env, limit: STEP_LIMIT });
-  return { passed: code === 0, output };
-}
-
-/**
- * @param {string} tool
- * @param {readonly string[]} args
- * @param {NodeJS.ProcessEnv} env
- * @returns {Promise<StepResult>}
- */
-async function performReader(tool, args, env) {
-  const { code, output } = await run('nice', ['-n', NICENESS, packageBin(tool), ...args], { env, limit: STEP_LIMIT });
   return { passed: code === 0, output };
 }
 
