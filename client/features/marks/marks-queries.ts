@@ -1,13 +1,14 @@
 import { keepPreviousData, queryOptions } from '@tanstack/react-query';
 import type { CallInput } from '#contract/endpoint.ts';
 import { listMarks, listMarksToRead, readMark } from '#contract/marks.ts';
+import type { MarkInShort } from '#contract/parts.ts';
 import { call } from '../../lib/call.ts';
 import { isWaiting, WAITING_MS } from '../photos/photo-queries.ts';
 
 export type MarksSearch = CallInput<typeof listMarks>['query'];
 export type MarksToReadSearch = CallInput<typeof listMarksToRead>['query'];
 
-/** How often a page looks whether the working out has ended. */
+/** How often a page looks whether the working out has ended, and a list whether its photos are ready. */
 const WORKING_OUT_MS = 4_000;
 
 export const markKeys = {
@@ -35,6 +36,7 @@ export const marksList = (search: MarksSearch) =>
     queryFn: ({ signal }) => call(listMarks, { query: search, signal }),
     placeholderData: keepPreviousData,
     staleTime: 0,
+    refetchInterval: ({ state }) => (state.data?.items.some(awaitsPhoto) === true ? WORKING_OUT_MS : false),
   });
 
 export const marksToRead = (search: MarksToReadSearch) =>
@@ -43,4 +45,9 @@ export const marksToRead = (search: MarksToReadSearch) =>
     queryFn: ({ signal }) => call(listMarksToRead, { query: search, signal }),
     placeholderData: keepPreviousData,
     staleTime: 0,
+    refetchInterval: ({ state }) => (state.data?.items.some(awaitsPhoto) === true ? WORKING_OUT_MS : false),
   });
+
+function awaitsPhoto({ photo }: Pick<MarkInShort, 'photo'>): boolean {
+  return photo !== null && isWaiting(photo.photo);
+}
